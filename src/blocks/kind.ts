@@ -1,0 +1,48 @@
+import type { Fluid } from "../fluids/fluid.js";
+import type { BlockDefinition } from "./definition.js";
+import type { Alternative, Key } from "./keys.js";
+import type { Problem } from "./problem.js";
+import type { Stream } from "./stream.js";
+import type { Unit } from "./unit.js";
+
+/** What every block may know of the machine around it. */
+export interface Setting {
+  readonly fluid: Fluid;
+  readonly surroundings: { /** K */ readonly temperature: number; /** Pa */ readonly pressure: number };
+}
+
+/** The streams that one entry of the loop stands between. */
+export interface Port {
+  readonly entry: BlockDefinition;
+  readonly inlet: Stream;
+  readonly outlet: Stream;
+}
+
+/**
+ * A block kind: one record says everything that the rest of the program knows about it. The cycle-file reader checks
+ * against the keys, the help and the docs are printed from them, the pressure plan asks `outletPressure`, and the
+ * solver works on what `place` returns. Nothing outside asks which kind it has before it.
+ */
+export interface BlockKind {
+  /** As written in the cycle file: "expander". */
+  readonly kind: string;
+  /** One sentence for help and docs. */
+  readonly summary: string;
+  /** The sides under which the block stands in the loop, once each; left out for a block that stands once. */
+  readonly sides?: readonly [string, string];
+  readonly keys: readonly Key[];
+  /** Groups of keys of which one must be given. */
+  readonly alternatives: readonly Alternative[];
+  /** True where the outlet's state is fixed whatever comes in, so that no feedback passes through the block. */
+  fixesOutlet?(entry: BlockDefinition): boolean;
+  /** Checks between the keys of a block, over all its entries; ranges and alternatives are checked from the records. */
+  check?(entries: readonly BlockDefinition[], setting: Omit<Setting, "fluid">): Problem[];
+  /**
+   * Pressure (Pa) behind an entry, from the pressure before it; undefined where it needs the inlet's and has none.
+   */
+  outletPressure(entry: BlockDefinition, inletPressure: number | undefined): number | undefined;
+  /** Whether the pressure may rise, must fall, or may only fall or stay, through the block. */
+  readonly pressureChange: "rises" | "falls" | "falls or stays";
+  /** The block with its numbers ready, between its streams; ports in the order of `sides`. */
+  place(ports: readonly Port[], setting: Setting): Unit;
+}

@@ -1,0 +1,34 @@
+import type { Warning } from "../cycle/result.js";
+
+/** Heat that crosses a block's boundary. */
+export interface HeatFlow {
+  /** W, positive into the gas */
+  readonly heat: number;
+  /**
+   * K, temperature at which it crosses: the surroundings' for a leak or a rejection; for a load, the mean at which
+   * the gas takes it up, so that a load destroys no exergy of its own.
+   */
+  readonly temperature: number;
+}
+
+/** Energy that crosses a block's boundary, for the audits and the machine's totals. */
+export interface EnergyFlows {
+  /** W into the gas; negative where the gas does work */
+  readonly work: number;
+  /** W that motors, or an outside refrigerator, take from outside for this block */
+  readonly drive: number;
+  readonly heat: readonly HeatFlow[];
+}
+
+/** A block in its place, with its numbers ready. */
+export interface Unit {
+  readonly name: string;
+  readonly kind: string;
+  /** Sets the outlets' enthalpies from the inlets'. Throws an OutOfRangeError or an Infeasible when it cannot. */
+  evaluate(): void;
+  /** Called once the cycle has converged. */
+  energyFlows(): EnergyFlows;
+  /** The block's own figures in SI units. */
+  figures(): Readonly<Record<string, unknown>>;
+  warnings?(): readonly Warning[];
+}
