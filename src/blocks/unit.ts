@@ -1,4 +1,9 @@
-import type { Warning } from "../cycle/result.js";
+/** Something the user should know about a result that is right all the same. */
+export interface Warning {
+  readonly code: string;
+  readonly block: string | null;
+  readonly message: string;
+}
 
 /** Heat that crosses a block's boundary. */
 export interface HeatFlow {

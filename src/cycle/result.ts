@@ -1,3 +1,4 @@
+import type { Warning } from "../blocks/unit.js";
 import type { Phase } from "../fluids/state.js";
 
 /** One state point of the solved cycle. */
@@ -69,22 +70,8 @@ export interface Liquefaction {
   readonly given: number | null;
 }
 
-export interface Warning {
-  readonly code: string;
-  readonly block: string | null;
-  readonly message: string;
-}
-
-export interface Caution {
-  readonly code: string;
-  readonly title: string;
-  readonly text: string;
-  /** The figures that trigger it, SI units. */
-  readonly figures: Readonly<Record<string, number>>;
-}
-
-/** The converged steady state: everything that any output shows, SI units throughout. */
-export interface CycleResult {
+/** The converged steady state, SI units throughout. */
+export interface SteadyState {
   readonly title: string;
   readonly fluid: string;
   readonly circuit: "closed" | "open";
@@ -128,5 +115,17 @@ export interface CycleResult {
   /** W destroyed in each block, and its share of the whole */
   readonly exergy: readonly { readonly block: string; readonly destroyed: number; readonly share: number }[];
   readonly warnings: readonly Warning[];
+}
+
+export interface Caution {
+  readonly code: string;
+  readonly title: string;
+  readonly text: string;
+  /** The figures that trigger it, SI units. */
+  readonly figures: Readonly<Record<string, number>>;
+}
+
+/** What every output shows: the steady state and the hazards computed from it. */
+export interface CycleResult extends SteadyState {
   readonly cautions: readonly Caution[];
 }
