@@ -8,7 +8,8 @@ export type Dimension =
   | "pressure difference"
   | "power"
   | "conductance"
-  | "volume";
+  | "volume"
+  | "specific enthalpy";
 
 /** A key whose value is a number with a unit, or a bare fraction or count. */
 export interface NumberKey {
@@ -51,4 +52,13 @@ export interface Alternative {
   readonly name: string;
   readonly optional?: boolean;
   readonly side?: string;
+}
+
+/** A figure that a kind reports of a solved block, so that tables can print it without knowing the kind. */
+export interface Figure {
+  /** Its name in the JSON result, camelCase. */
+  readonly name: string;
+  readonly label: string;
+  /** "none" for a bare number, "text" for words, "profile" for an exchanger's list of profile points. */
+  readonly dimension: Dimension | "temperature list" | "none" | "none list" | "text" | "profile";
 }

@@ -1,6 +1,6 @@
 import type { Fluid } from "../fluids/fluid.js";
 import type { BlockDefinition } from "./definition.js";
-import type { Alternative, Key } from "./keys.js";
+import type { Alternative, Figure, Key } from "./keys.js";
 import type { Problem } from "./problem.js";
 import type { Stream } from "./stream.js";
 import type { Unit } from "./unit.js";
@@ -33,6 +33,10 @@ export interface BlockKind {
   readonly keys: readonly Key[];
   /** Groups of keys of which one must be given. */
   readonly alternatives: readonly Alternative[];
+  /** What it reports of a solved block, in the order of printing. */
+  readonly figures: readonly Figure[];
+  /** The key whose value decides whether the machine liquefies: an expander's efficiency. */
+  readonly liquefactionKey?: string;
   /** True where the outlet's state is fixed whatever comes in, so that no feedback passes through the block. */
   fixesOutlet?(entry: BlockDefinition): boolean;
   /** Checks between the keys of a block, over all its entries; ranges and alternatives are checked from the records. */

@@ -35,5 +35,28 @@ export interface Unit {
   energyFlows(): EnergyFlows;
   /** The block's own figures in SI units. */
   figures(): Readonly<Record<string, unknown>>;
+  /** The refrigeration taken up, of a block that is a load. */
+  refrigeration?(): Refrigeration;
+  /** Why the converged state is no machine that can exist, where it is none: heat that would have to flow backwards. */
+  impossible?(): Impossibility | null;
   warnings?(): readonly Warning[];
+}
+
+/** What makes a block's converged state impossible. */
+export interface Impossibility {
+  readonly quantity: string;
+  /** One sentence with the figures. */
+  readonly reason: string;
+  /** What to change, one sentence. */
+  readonly advice: string;
+}
+
+/** Refrigeration taken up at a load. */
+export interface Refrigeration {
+  /** W */
+  readonly heat: number;
+  /** K */
+  readonly inletTemperature: number;
+  /** K */
+  readonly outletTemperature: number;
 }

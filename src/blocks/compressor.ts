@@ -1,0 +1,171 @@
+import { compression, type Compression } from "./compression.js";
+import { given, type BlockDefinition } from "./definition.js";
+import type { BlockKind, Port, Setting } from "./kind.js";
+import { surely } from "./ports.js";
+import type { Problem } from "./problem.js";
+import { efficiencyKey } from "./shared-keys.js";
+import { stageRatio } from "./stages.js";
+import type { Unit } from "./unit.js";
+
+/** Raises the pressure, in one stage or in several with cooling between them. */
+export const compressor: BlockKind = {
+  kind: "compressor",
+  summary: "Raises the gas's pressure with work, in one stage or in several with cooling between them.",
+  keys: [
+    {
+      type: "number",
+      name: "outlet-pressure",
+      dimension: "pressure",
+      range: { lowest: 0, open: "lowest" },
+      help: "pressure behind the last stage",
+      alternative: "pressure",
+    },
+    {
+      type: "number",
+      name: "pressure-ratio",
+      dimension: "fraction",
+      range: { lowest: 1, open: "lowest" },
+      help: "outlet pressure over inlet pressure",
+      alternative: "pressure",
+    },
+    efficiencyKey("efficiency", "isentropic efficiency of each stage", { alternative: "efficiency" }),
+    efficiencyKey("polytropic-efficiency", "efficiency of a vanishingly small pressure rise", { alternative: "efficiency" }),
+    efficiencyKey("isothermal-efficiency", "isothermal work over real work, for a machine cooled to its inlet temperature", {
+      alternative: "efficiency",
+    }),
+    {
+      type: "number",
+      name: "stages",
+      dimension: "count",
+      range: { lowest: 1, highest: 20 },
+      help: "stages of equal pressure ratio",
+      default: 1,
+    },
+    {
+      type: "number",
+      name: "intercool-to",
+      dimension: "temperature",
+      range: { lowest: 0, open: "lowest" },
+      help: "temperature to which the gas is cooled between stages; left out, it is not cooled there",
+    },
+    {
+      type: "number",
+      name: "intercooler-pressure-drop",
+      dimension: "pressure difference",
+      range: { lowest: 0 },
+      help: "pressure lost in each intercooler",
+      default: 0,
+    },
+    efficiencyKey("drive-efficiency", "shaft power over the power that the motor takes", { default: 1 }),
+  ],
+  alternatives: [{ name: "pressure" }, { name: "efficiency" }],
+  figures: [
+    { name: "power", label: "power into the gas", dimension: "power" },
+    { name: "drivePower", label: "power the motor takes", dimension: "power" },
+    { name: "pressureRatio", label: "pressure ratio", dimension: "none" },
+    { name: "stagePressureRatio", label: "ratio of each stage", dimension: "none" },
+    { name: "dischargeTemperature", label: "hottest discharge", dimension: "temperature" },
+    { name: "stageDischargeTemperatures", label: "discharge of each stage", dimension: "temperature list" },
+    { name: "heatRejected", label: "heat rejected on the way", dimension: "power" },
+    { name: "isentropicEfficiency", label: "isentropic efficiency, whole machine", dimension: "fraction" },
+  ],
+  check: checkCompressor,
+  pressureChange: "rises",
+  outletPressure(entry, inletPressure) {
+    const outlet = given(entry, "outlet-pressure");
+    if (outlet !== undefined || inletPressure === undefined) return outlet;
+    return inletPressure * (given(entry, "pressure-ratio") ?? NaN);
+  },
+  place: ([port], setting) => placeCompressor(surely(port), setting),
+};
+
+function checkCompressor([entry]: readonly BlockDefinition[], { surroundings }: Omit<Setting, "fluid">): Problem[] {
+  const definition = surely(entry);
+  const problems: Problem[] = [];
+  const intercoolTo = given(definition, "intercool-to");
+  const stages = given(definition, "stages") ?? 1;
+  if (stages !== Math.round(stages)) {
+    problems.push({ code: "not-whole", entry: definition, key: "stages", found: `${stages}`, expected: "a whole number" });
+  }
+  if (intercoolTo !== undefined && stages < 2) {
+    problems.push({
+      code: "intercooler-without-stages",
+      entry: definition,
+      key: "intercool-to",
+      found: "an intercooler in a single-stage compressor",
+      expected: "stages: 2 or more, or no intercool-to",
+    });
+  }
+  if (intercoolTo !== undefined && intercoolTo < surroundings.temperature) {
+    problems.push({
+      code: "intercooler-below-surroundings",
+      entry: definition,
+      key: "intercool-to",
+      found: `${intercoolTo.toFixed(2)} K, colder than the surroundings that it rejects heat to`,
+      expected: `at least the surroundings' ${surroundings.temperature.toFixed(2)} K`,
+    });
+  }
+  return problems;
+}
+
+function placeCompressor({ entry, inlet, outlet }: Port, { fluid, surroundings }: Setting): Unit {
+  const stages = given(entry, "stages") ?? 1;
+  const intercoolTo = given(entry, "intercool-to");
+  const intercoolerDrop = given(entry, "intercooler-pressure-drop") ?? 0;
+  const driveEfficiency = given(entry, "drive-efficiency") ?? 1;
+  const ratio = stageRatio(inlet.pressure, outlet.pressure, stages, intercoolerDrop);
+  const compress: Compression = compression(entry, fluid);
+  const discharges = new Float64Array(stages);
+  /** J/kg into the gas, and J/kg rejected by jacket and intercoolers, as of the last evaluation. */
+  let work = 0;
+  let rejected = 0;
+
+  function evaluate(): void {
+    let pressure = inlet.pressure;
+    let enthalpy = inlet.enthalpy;
+    work = 0;
+    rejected = 0;
+    for (let stage = 0; stage < stages; stage++) {
+      const last = stage === stages - 1;
+      const behind = last ? outlet.pressure : pressure * ratio;
+      const step = compress(pressure, enthalpy, behind);
+      work += step.work;
+      rejected += enthalpy + step.work - step.enthalpy;
+      discharges[stage] = step.temperature;
+      enthalpy = step.enthalpy;
+      pressure = behind;
+      if (last || intercoolTo === undefined) continue;
+      pressure = behind - intercoolerDrop;
+      // An intercooler cannot warm gas that leaves the stage colder than it.
+      const cooled = step.temperature > intercoolTo ? fluid.temperaturePressure(intercoolTo, pressure, outlet.state).enthalpy : enthalpy;
+      rejected += enthalpy - cooled;
+      enthalpy = cooled;
+    }
+    outlet.enthalpy = enthalpy;
+  }
+
+  return {
+    name: entry.name,
+    kind: entry.kind,
+    evaluate,
+    energyFlows: () => ({
+      work: inlet.massFlow * work,
+      drive: (inlet.massFlow * work) / driveEfficiency,
+      heat: [{ heat: -inlet.massFlow * rejected, temperature: surroundings.temperature }],
+    }),
+    figures() {
+      const before = fluid.pressureEnthalpy(inlet.pressure, inlet.enthalpy, inlet.state);
+      const ideal = fluid.pressureEntropy(outlet.pressure, before.entropy, outlet.state).enthalpy - inlet.enthalpy;
+      return {
+        power: inlet.massFlow * work,
+        drivePower: (inlet.massFlow * work) / driveEfficiency,
+        pressureRatio: outlet.pressure / inlet.pressure,
+        stagePressureRatio: ratio,
+        dischargeTemperature: Math.max(...discharges),
+        stageDischargeTemperatures: Array.from(discharges),
+        heatRejected: inlet.massFlow * rejected,
+        isentropicEfficiency: ideal / work,
+      };
+    },
+  };
+}

@@ -1,0 +1,120 @@
+import { given, required, type BlockDefinition } from "./definition.js";
+import type { BlockKind, Port, Setting } from "./kind.js";
+import { flash, surely } from "./ports.js";
+import type { Problem } from "./problem.js";
+import { efficiencyKey } from "./shared-keys.js";
+import { State } from "../fluids/state.js";
+import type { Unit } from "./unit.js";
+
+/** Expands the gas with work. */
+export const expander: BlockKind = {
+  kind: "expander",
+  summary: "Expands the gas with work, in one stage or several of equal pressure ratio.",
+  keys: [
+    {
+      type: "number",
+      name: "outlet-pressure",
+      dimension: "pressure",
+      range: { lowest: 0, open: "lowest" },
+      help: "pressure behind the last stage",
+      alternative: "pressure",
+    },
+    {
+      type: "number",
+      name: "pressure-ratio",
+      dimension: "fraction",
+      range: { lowest: 1, open: "lowest" },
+      help: "inlet pressure over outlet pressure",
+      alternative: "pressure",
+    },
+    efficiencyKey("efficiency", "isentropic efficiency of each stage's wheel", { required: true }),
+    {
+      type: "number",
+      name: "stages",
+      dimension: "count",
+      range: { lowest: 1, highest: 20 },
+      help: "stages of equal pressure ratio",
+      default: 1,
+    },
+    {
+      type: "number",
+      name: "seal-leak",
+      dimension: "fraction",
+      range: { lowest: 0, highest: 1, open: "highest" },
+      help: "share of the flow that passes each wheel unexpanded and mixes in behind it",
+      default: 0,
+    },
+    efficiencyKey("mechanical-efficiency", "power at the shaft over power out of the gas", { default: 1 }),
+  ],
+  alternatives: [{ name: "pressure" }],
+  figures: [
+    { name: "power", label: "power out of the gas", dimension: "power" },
+    { name: "shaftPower", label: "power at the shaft", dimension: "power" },
+    { name: "pressureRatio", label: "pressure ratio", dimension: "none" },
+    { name: "stagePressureRatio", label: "ratio of each stage", dimension: "none" },
+    { name: "inletTemperature", label: "gas arrives at", dimension: "temperature" },
+    { name: "outletTemperature", label: "gas leaves at", dimension: "temperature" },
+    { name: "outletVapourFraction", label: "vapour fraction behind it", dimension: "fraction" },
+    { name: "isentropicEnthalpyDrop", label: "isentropic enthalpy drop", dimension: "specific enthalpy" },
+  ],
+  liquefactionKey: "efficiency",
+  check: checkExpander,
+  pressureChange: "falls",
+  outletPressure(entry, inletPressure) {
+    const outlet = given(entry, "outlet-pressure");
+    if (outlet !== undefined || inletPressure === undefined) return outlet;
+    return inletPressure / (given(entry, "pressure-ratio") ?? NaN);
+  },
+  place: ([port], setting) => placeExpander(surely(port), setting),
+};
+
+function checkExpander([entry]: readonly BlockDefinition[]): Problem[] {
+  const definition = surely(entry);
+  const stages = given(definition, "stages") ?? 1;
+  if (stages === Math.round(stages)) return [];
+  return [{ code: "not-whole", entry: definition, key: "stages", found: `${stages}`, expected: "a whole number" }];
+}
+
+function placeExpander({ entry, inlet, outlet }: Port, { fluid }: Setting): Unit {
+  const stages = given(entry, "stages") ?? 1;
+  // What leaks past the wheel keeps its enthalpy, so the mixture behind it has lost that much less.
+  const expanded = required(entry, "efficiency") * (1 - (given(entry, "seal-leak") ?? 0));
+  const mechanicalEfficiency = given(entry, "mechanical-efficiency") ?? 1;
+  const ratio = (inlet.pressure / outlet.pressure) ** (1 / stages);
+  const scratch = new State();
+  const power = (): number => inlet.massFlow * (inlet.enthalpy - outlet.enthalpy);
+  return {
+    name: entry.name,
+    kind: entry.kind,
+    evaluate() {
+      let pressure = inlet.pressure;
+      let enthalpy = inlet.enthalpy;
+      let state = inlet.state;
+      for (let stage = 1; stage <= stages; stage++) {
+        const behind = stage === stages ? outlet.pressure : pressure / ratio;
+        const entropy = fluid.pressureEnthalpy(pressure, enthalpy, state).entropy;
+        const ideal = fluid.pressureEntropy(behind, entropy, scratch).enthalpy;
+        enthalpy -= expanded * (enthalpy - ideal);
+        pressure = behind;
+        state = scratch;
+      }
+      outlet.enthalpy = enthalpy;
+    },
+    energyFlows: () => ({ work: -power(), drive: 0, heat: [] }),
+    figures() {
+      const before = flash(fluid, inlet);
+      const after = flash(fluid, outlet);
+      const ideal = fluid.pressureEntropy(outlet.pressure, before.entropy, scratch).enthalpy;
+      return {
+        power: power(),
+        shaftPower: power() * mechanicalEfficiency,
+        pressureRatio: inlet.pressure / outlet.pressure,
+        stagePressureRatio: ratio,
+        inletTemperature: before.temperature,
+        outletTemperature: after.temperature,
+        outletVapourFraction: Number.isNaN(after.vapourFraction) ? null : after.vapourFraction,
+        isentropicEnthalpyDrop: before.enthalpy - ideal,
+      };
+    },
+  };
+}

@@ -1,0 +1,80 @@
+import { given } from "./definition.js";
+import type { BlockKind, Port, Setting } from "./kind.js";
+import { flash, surely } from "./ports.js";
+import { State } from "../fluids/state.js";
+import type { Unit } from "./unit.js";
+
+/** Where the refrigeration is taken up. */
+export const load: BlockKind = {
+  kind: "load",
+  summary: "Takes up the refrigeration: a stated heat, or whatever brings the gas to a stated temperature.",
+  keys: [
+    {
+      type: "number",
+      name: "heat",
+      dimension: "power",
+      range: { lowest: 0 },
+      help: "heat given to the gas",
+      alternative: "duty",
+    },
+    {
+      type: "number",
+      name: "outlet-temperature",
+      dimension: "temperature",
+      range: { lowest: 0, open: "lowest" },
+      help: "temperature at which the gas leaves the load; the heat follows",
+      alternative: "duty",
+    },
+  ],
+  alternatives: [{ name: "duty" }],
+  figures: [
+    { name: "heat", label: "heat lifted", dimension: "power" },
+    { name: "inletTemperature", label: "gas arrives at", dimension: "temperature" },
+    { name: "outletTemperature", label: "gas leaves at", dimension: "temperature" },
+  ],
+  fixesOutlet: (entry) => given(entry, "outlet-temperature") !== undefined,
+  pressureChange: "falls or stays",
+  outletPressure: (_entry, inletPressure) => inletPressure,
+  place: ([port], setting) => placeLoad(surely(port), setting),
+};
+
+function placeLoad({ entry, inlet, outlet }: Port, { fluid }: Setting): Unit {
+  const stated = given(entry, "heat");
+  const outletTemperature = given(entry, "outlet-temperature");
+  const scratch = new State();
+  const heat = (): number => stated ?? inlet.massFlow * (outlet.enthalpy - inlet.enthalpy);
+  const refrigeration = () => ({
+    heat: heat(),
+    inletTemperature: flash(fluid, inlet).temperature,
+    outletTemperature: flash(fluid, outlet).temperature,
+  });
+  return {
+    name: entry.name,
+    kind: entry.kind,
+    evaluate() {
+      outlet.enthalpy =
+        outletTemperature === undefined
+          ? inlet.enthalpy + heat() / inlet.massFlow
+          : fluid.temperaturePressure(outletTemperature, outlet.pressure, scratch).enthalpy;
+    },
+    energyFlows() {
+      const before = flash(fluid, inlet);
+      const after = flash(fluid, outlet);
+      // Over a pipe without friction this mean, heat over entropy taken up, is the one at which nothing is destroyed.
+      const entropyRise = inlet.massFlow * (after.entropy - before.entropy);
+      const temperature = entropyRise > 0 && heat() > 0 ? heat() / entropyRise : before.temperature;
+      return { work: 0, drive: 0, heat: [{ heat: heat(), temperature }] };
+    },
+    figures: () => ({ ...refrigeration() }),
+    refrigeration,
+    impossible() {
+      if (heat() >= 0) return null;
+      const arrives = flash(fluid, inlet).temperature;
+      return {
+        quantity: "outlet-temperature",
+        reason: `the gas arrives at ${arrives.toFixed(2)} K and would have to be cooled, not warmed, to leave at ${outletTemperature?.toFixed(2)} K.`,
+        advice: `Ask for an outlet temperature above ${arrives.toFixed(2)} K, or make the machine colder.`,
+      };
+    },
+  };
+}
