@@ -1,0 +1,183 @@
+import type { Fluid } from "../fluids/fluid.js";
+import { State } from "../fluids/state.js";
+import { leastOf } from "./least.js";
+import { bracketedRoot } from "./root.js";
+
+/** One stream through an exchanger: what comes in, and the pressure at which it leaves. */
+export interface Side {
+  /** kg/s */
+  massFlow: number;
+  /** J/kg at the inlet */
+  enthalpy: number;
+  /** Pa at the inlet */
+  pressure: number;
+  /** Pa */
+  outletPressure: number;
+}
+
+/** Places inside at which the temperature difference is looked at first, as duty fractions from the warm end. */
+const LOOKS = [0.01, 0.125, 0.25, 0.375, 0.5, 0.625, 0.75, 0.875, 0.99];
+/** A difference inside smaller than this share of the largest one calls for a closer look. */
+const CLOSE = 0.1;
+/** K; a difference that misses its target by less is round-off of two flashes, not a crossing. */
+const ROUND_OFF = 1e-8;
+/** Segments with which the conductance is first summed, and the most. */
+const FIRST_SEGMENTS = 16;
+const MOST_SEGMENTS = 4096;
+/** Relative change of the conductance on doubling the segments at which it counts as known (the contract asks 1e-3). */
+const CONDUCTANCE_TOLERANCE = 5e-4;
+
+/**
+ * Two streams in counterflow, both followed along their real enthalpies. Places inside are duty fractions: 0 at the warm
+ * end, 1 at the cold end; pressures fall, and a heat leak comes into the cold stream, in proportion to the duty.
+ */
+export class Counterflow {
+  readonly warm: Side = { massFlow: NaN, enthalpy: NaN, pressure: NaN, outletPressure: NaN };
+  readonly cold: Side = { massFlow: NaN, enthalpy: NaN, pressure: NaN, outletPressure: NaN };
+  /** W into the cold stream from outside */
+  heatLeak = 0;
+  private segments = FIRST_SEGMENTS;
+  private readonly warmState = new State();
+  private readonly coldState = new State();
+
+  constructor(private readonly fluid: Fluid) {}
+
+  /** K */
+  warmTemperature(duty: number, place: number): number {
+    const { massFlow, enthalpy, pressure, outletPressure } = this.warm;
+    const here = pressure + place * (outletPressure - pressure);
+    return this.fluid.pressureEnthalpy(here, enthalpy - (place * duty) / massFlow, this.warmState).temperature;
+  }
+
+  /** K */
+  coldTemperature(duty: number, place: number): number {
+    const { massFlow, enthalpy, pressure, outletPressure } = this.cold;
+    const passed = 1 - place;
+    const here = pressure + passed * (outletPressure - pressure);
+    return this.fluid.pressureEnthalpy(here, enthalpy + (passed * (duty + this.heatLeak)) / massFlow, this.coldState)
+      .temperature;
+  }
+
+  /** K, warm less cold */
+  difference(duty: number, place: number): number {
+    return this.warmTemperature(duty, place) - this.coldTemperature(duty, place);
+  }
+
+  /**
+   * The largest duty (W) that leaves at least the given temperature difference (K) everywhere inside; 0 where the streams
+   * come in closer than that.
+   */
+  dutyAtApproach(approach: number): number {
+    const { warm, cold, fluid } = this;
+    const warmInlet = this.warmTemperature(0, 0);
+    const coldInlet = this.coldTemperature(0, 1);
+    if (!(warmInlet - approach > coldInlet)) return 0;
+    const coldOutlet = fluid.temperaturePressure(warmInlet - approach, cold.outletPressure, this.coldState).enthalpy;
+    const warmOutlet = fluid.temperaturePressure(coldInlet + approach, warm.outletPressure, this.warmState).enthalpy;
+    const endsAllow = Math.min(
+      cold.massFlow * (coldOutlet - cold.enthalpy) - this.heatLeak,
+      warm.massFlow * (warm.enthalpy - warmOutlet),
+    );
+    if (!(endsAllow > 0)) return 0;
+    if (!this.comesClose(endsAllow, approach)) return endsAllow;
+    const spare = (duty: number): number => this.smallestDifference(duty).value - approach;
+    const spareThere = spare(endsAllow);
+    if (spareThere >= -ROUND_OFF) return endsAllow;
+    return bracketedRoot(spare, 0, endsAllow, {}, undefined, spareThere);
+  }
+
+  /** Whether the difference somewhere inside is so near the approach that it has to be looked at closely. */
+  private comesClose(duty: number, approach: number): boolean {
+    let least = Infinity;
+    let most = 0;
+    for (const place of LOOKS) {
+      const spare = this.difference(duty, place) - approach;
+      if (spare < least) least = spare;
+      if (spare > most) most = spare;
+    }
+    return least < CLOSE * most;
+  }
+
+  /** The smallest temperature difference (K) and the duty fraction from the warm end at which it stands. */
+  smallestDifference(duty: number): { value: number; place: number } {
+    return leastOf((place) => this.difference(duty, place), 0, 1, this.kinks(duty));
+  }
+
+  /** Duty fractions at which a stream starts or ends its change of phase: the difference may have a corner there. */
+  private kinks(duty: number): number[] {
+    const { warm, cold, fluid, heatLeak } = this;
+    const places: number[] = [];
+    const add = (pressure: number, change: number, enthalpyAt: (place: number) => number): void => {
+      if (Math.max(pressure, pressure + change) >= fluid.criticalPressure) return;
+      for (const boundary of ["liquidEnthalpy", "vapourEnthalpy"] as const) {
+        const over = (place: number): number =>
+          enthalpyAt(place) - fluid.saturation(pressure + place * change)[boundary];
+        const first = over(0);
+        const last = over(1);
+        if (first * last < 0) places.push(bracketedRoot(over, 0, 1, {}, first, last));
+      }
+    };
+    add(warm.pressure, warm.outletPressure - warm.pressure, (place) => warm.enthalpy - (place * duty) / warm.massFlow);
+    add(
+      cold.outletPressure,
+      cold.pressure - cold.outletPressure,
+      (place) => cold.enthalpy + ((1 - place) * (duty + heatLeak)) / cold.massFlow,
+    );
+    return places;
+  }
+
+  /**
+   * Conductance (W/K) that the duty (W) takes: the integral of dQ/dT over the profile, by logarithmic mean differences of
+   * segments whose number doubles until it changes by less than 0.1 %. Infinity where the difference vanishes.
+   */
+  conductance(duty: number): number {
+    let coarse = this.summedConductance(duty, this.segments);
+    while (this.segments < MOST_SEGMENTS) {
+      const fine = this.summedConductance(duty, 2 * this.segments);
+      if (!Number.isFinite(fine) || Math.abs(fine - coarse) <= CONDUCTANCE_TOLERANCE * fine) return fine;
+      this.segments *= 2;
+      coarse = fine;
+    }
+    return coarse;
+  }
+
+  private summedConductance(duty: number, segments: number): number {
+    let sum = 0;
+    let before = this.difference(duty, 0);
+    for (let segment = 1; segment <= segments; segment++) {
+      const after = this.difference(duty, segment / segments);
+      sum += 1 / logarithmicMean(before, after);
+      before = after;
+    }
+    return (sum * duty) / segments;
+  }
+
+  /** The duty (W) that an exchanger of the given conductance (W/K) transfers. */
+  dutyAtConductance(conductance: number): number {
+    const most = this.dutyAtApproach(0);
+    if (most === 0) return 0;
+    // The mean difference that the duty leaves, less the one that it needs: nearly straight in the duty.
+    const spare = (duty: number): number => {
+      if (duty === 0) return this.difference(0, 0);
+      const taken = this.summedConductance(duty, 2 * this.segments);
+      return duty / taken - duty / conductance;
+    };
+    for (;;) {
+      const duty = bracketedRoot(spare, 0, most, {}, undefined, -most / conductance);
+      const segments = this.segments;
+      this.conductance(duty);
+      if (this.segments === segments) return duty;
+    }
+  }
+}
+
+/**
+ * Logarithmic mean of two temperature differences (K); 0 where either is not positive.
+ * Near equality the quotient loses its digits, so its series takes over there.
+ */
+export function logarithmicMean(first: number, second: number): number {
+  if (!(first > 0) || !(second > 0)) return 0;
+  const half = (first - second) / (first + second);
+  if (Math.abs(half) < 1e-3) return ((first + second) / 2) * (1 - (half * half) / 3);
+  return (first - second) / Math.log(first / second);
+}
