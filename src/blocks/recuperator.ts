@@ -1,4 +1,4 @@
-import { Counterflow } from "./counterflow.js";
+import { Counterflow, type Side } from "./counterflow.js";
 import { given, type BlockDefinition } from "./definition.js";
 import type { BlockKind, Port, Setting } from "./kind.js";
 import { flash, surely } from "./ports.js";
@@ -79,8 +79,8 @@ function placeRecuperator(warm: Port, cold: Port, { fluid, surroundings }: Setti
   let duty = 0;
 
   function connect(): void {
-    Object.assign(exchange.warm, side(warm));
-    Object.assign(exchange.cold, side(cold));
+    connectSide(exchange.warm, warm);
+    connectSide(exchange.cold, cold);
   }
 
   function figures(): Readonly<Record<string, unknown>> {
@@ -155,11 +155,9 @@ function dutyRule(entry: BlockDefinition, exchange: Counterflow): () => number {
   return () => effectiveness * exchange.dutyAtApproach(0);
 }
 
-function side({ inlet, outlet }: Port) {
-  return {
-    massFlow: inlet.massFlow,
-    enthalpy: inlet.enthalpy,
-    pressure: inlet.pressure,
-    outletPressure: outlet.pressure,
-  };
+function connectSide(side: Side, { inlet, outlet }: Port): void {
+  side.massFlow = inlet.massFlow;
+  side.enthalpy = inlet.enthalpy;
+  side.pressure = inlet.pressure;
+  side.outletPressure = outlet.pressure;
 }

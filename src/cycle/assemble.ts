@@ -1,0 +1,135 @@
+import type { Stream } from "../blocks/stream.js";
+import { NoSteadyState } from "./failure.js";
+import type { Network } from "./network.js";
+import { audit, type Audit } from "./audit.js";
+import type { LoadResult, Station, SteadyState } from "./result.js";
+import type { Settled } from "./settle.js";
+
+/** Largest imbalance of a block over the largest energy flow in a converged state. */
+const RESIDUAL_LIMIT = 1e-9;
+/** Largest first- and second-law imbalance of the whole machine. */
+const AUDIT_LIMIT = 1e-8;
+
+/** Everything about a settled machine but what would make it liquefy. */
+export type Assembled = Omit<SteadyState, "liquefaction">;
+
+/**
+ * Reads a settled network into a result.
+ * @throws NoSteadyState when the accounts do not close or a block's state is impossible
+ */
+export function assemble(network: Network, settled: Settled): Assembled {
+  const { definition, blocks, inlet } = network;
+  for (const { unit } of blocks) {
+    const impossible = unit.impossible?.() ?? null;
+    if (impossible !== null) throw new NoSteadyState(unit.name, impossible.quantity, impossible.reason, impossible.advice);
+  }
+  const accounts = audit(network);
+  refuseOpenAccounts(accounts);
+  const stations = stationsOf(network, accounts);
+  const coldest = stations.reduce((cold, station) => (station.temperature < cold.temperature ? station : cold));
+  const loads: LoadResult[] = blocks.flatMap(({ unit }) =>
+    unit.refrigeration === undefined ? [] : [{ name: unit.name, ...unit.refrigeration() }],
+  );
+  const power = powerOf(accounts);
+  const capacity = loads.reduce((sum, { heat }) => sum + heat, 0);
+  return {
+    title: definition.title,
+    fluid: definition.fluid,
+    circuit: definition.circuit,
+    converged: true,
+    solver: {
+      iterations: settled.iterations,
+      residual: accounts.residual,
+      otherSteadyStates: settled.otherSteadyStates,
+    },
+    surroundings: definition.surroundings,
+    massFlow: inlet.massFlow,
+    coldEnd: { temperature: coldest.temperature, station: coldest.station },
+    refrigeration: { capacity, loads },
+    power,
+    performance: performanceOf(network, accounts, capacity, power.net),
+    liquid: liquidOf(stations),
+    stations,
+    blocks: blocks.map(({ unit }) => ({ name: unit.name, kind: unit.kind, ...unit.figures() })),
+    audit: { energy: accounts.energy, exergy: accounts.exergy },
+    exergy: accounts.destroyed,
+    warnings: blocks.flatMap(({ unit }) => unit.warnings?.() ?? []),
+  };
+}
+
+function refuseOpenAccounts({ residual, energy, exergy, worstBlock }: Audit): void {
+  const advice = "Change a pressure or an efficiency a little and run again; please report the cycle file.";
+  if (residual > RESIDUAL_LIMIT) {
+    throw new NoSteadyState(worstBlock, "balance", `its energy balance does not close: ${residual.toExponential(1)} of the largest flow.`, advice);
+  }
+  if (energy > AUDIT_LIMIT || exergy > AUDIT_LIMIT) {
+    throw new NoSteadyState(
+      null,
+      "balance",
+      `the audit does not close: first law ${energy.toExponential(1)}, second law ${exergy.toExponential(1)}.`,
+      advice,
+    );
+  }
+}
+
+/** State points in the order in which the gas passes them. */
+function stationsOf({ definition, streams, inlet, setting }: Network, accounts: Audit): Station[] {
+  const at = (stream: Stream, station: number, after: string): Station => {
+    const state = setting.fluid.pressureEnthalpy(stream.pressure, stream.enthalpy, stream.state);
+    return {
+      station,
+      after,
+      temperature: state.temperature,
+      pressure: stream.pressure,
+      enthalpy: stream.enthalpy,
+      entropy: state.entropy,
+      density: state.density,
+      vapourFraction: Number.isNaN(state.vapourFraction) ? null : state.vapourFraction,
+      phase: state.phase,
+      massFlow: stream.massFlow,
+      exergy: accounts.exergyOf(stream),
+    };
+  };
+  const stations = definition.loop.map(({ name, side }, index) =>
+    at(streams[index] as Stream, index + 1, side === undefined ? name : `${name} ${side}`),
+  );
+  return definition.circuit === "open" ? [at(inlet, 0, "intake"), ...stations] : stations;
+}
+
+function powerOf({ flows }: Audit): SteadyState["power"] {
+  let compression = 0;
+  let drive = 0;
+  let expansion = 0;
+  for (const flow of flows.values()) {
+    if (flow.work > 0) compression += flow.work;
+    else expansion -= flow.work;
+    drive += flow.drive;
+  }
+  return { compression, drive, expansion, recovered: 0, net: drive };
+}
+
+/** Against a reversible refrigerator that lifts each load's heat from the mean temperature at which the gas takes it up. */
+function performanceOf({ blocks, setting }: Network, accounts: Audit, capacity: number, net: number): SteadyState["performance"] {
+  const ambient = setting.surroundings.temperature;
+  let reversible = 0;
+  for (const { unit } of blocks) {
+    if (unit.refrigeration === undefined) continue;
+    for (const { heat, temperature } of accounts.flows.get(unit.name)?.heat ?? []) reversible += heat * (ambient / temperature - 1);
+  }
+  if (capacity <= 0 || net <= 0) return { cop: null, carnotCop: null, secondLawEfficiency: null };
+  // Loads no colder than the surroundings need no refrigerator: there is no ideal to compare with.
+  if (reversible <= 0) return { cop: capacity / net, carnotCop: null, secondLawEfficiency: null };
+  return { cop: capacity / net, carnotCop: capacity / reversible, secondLawEfficiency: reversible / net };
+}
+
+/** The liquid carried by the wettest station. */
+function liquidOf(stations: readonly Station[]): SteadyState["liquid"] {
+  let wettest: SteadyState["liquid"] = null;
+  for (const { phase, vapourFraction, massFlow } of stations) {
+    const fractionOfFlow = phase === "liquid" ? 1 : 1 - (vapourFraction ?? 1);
+    if (fractionOfFlow > (wettest?.fractionOfFlow ?? 0)) {
+      wettest = { massFlow: massFlow * fractionOfFlow, fractionOfFlow, oxygenMoleFraction: null };
+    }
+  }
+  return wettest;
+}

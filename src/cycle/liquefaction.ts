@@ -1,0 +1,94 @@
+import { given } from "../blocks/definition.js";
+import { blockKind } from "../blocks/registry.js";
+import { bracketedRoot } from "../blocks/root.js";
+import { fluid as fluidNamed } from "../fluids/registry.js";
+import type { CycleDefinition } from "./definition.js";
+import { NoSteadyState } from "./failure.js";
+import type { Liquefaction, Station } from "./result.js";
+
+/** Efficiency to which the threshold is known. */
+const TOLERANCE = 1e-8;
+/** Lowest efficiency considered: a wheel that only brakes the gas. */
+const LOWEST = 0.01;
+/** J/kg, a margin that stands for a machine that does not even cool to its surroundings' temperature. */
+const FAR_FROM_LIQUID = 1e6;
+
+/** Enthalpy over the dew point's (J/kg) where it is smallest, and the station; null where nothing can condense. */
+export interface Margin {
+  readonly margin: number;
+  readonly where: string;
+}
+
+/** How far a machine's stations are from condensing. */
+export function liquefactionMargin(stations: readonly Station[], fluidName: string): Margin | null {
+  const fluid = fluidNamed(fluidName);
+  let least: Margin | null = null;
+  for (const { pressure, enthalpy, after } of stations) {
+    if (pressure >= fluid.criticalPressure || pressure < fluid.lowestSaturationPressure) continue;
+    const margin = enthalpy - fluid.saturation(pressure).vapourEnthalpy;
+    if (least === null || margin < least.margin) least = { margin, where: after };
+  }
+  return least;
+}
+
+/**
+ * The smallest isentropic efficiency at which the machine begins to liquefy, put to every expander at once or to the one
+ * named: the root of the margin, which is followed as a continuous quantity.
+ *
+ * @param margin what the machine shows as it is defined
+ * @param marginOf the margin of a changed definition; throws NoSteadyState where it has none
+ */
+export function liquefactionThreshold(
+  definition: CycleDefinition,
+  margin: Margin | null,
+  marginOf: (changed: CycleDefinition) => number,
+  expander?: string,
+): Liquefaction {
+  const values = efficiencies(definition, expander);
+  const parameter = expander === undefined ? "every expander's efficiency" : `${expander}.efficiency`;
+  const found = { reached: margin !== null && margin.margin < 0, margin: margin?.margin ?? null, where: margin?.where ?? null, parameter };
+  const [first] = values;
+  const same = first !== undefined && values.every((value) => value === first) ? first : null;
+  const answer = (required: number | null, reason: string | null): Liquefaction => ({ ...found, required, reason, given: same });
+  if (first === undefined) return answer(null, "the machine has no expander");
+  if (margin === null) return answer(null, "no station lies below the critical pressure, where a gas can condense");
+
+  const marginAt = (efficiency: number): number => {
+    try {
+      return marginOf(withEfficiency(definition, efficiency, expander));
+    } catch (error) {
+      if (!(error instanceof NoSteadyState)) throw error;
+      return error.quantity === "temperature" ? -FAR_FROM_LIQUID : FAR_FROM_LIQUID;
+    }
+  };
+  const known = same === null ? null : { efficiency: same, margin: margin.margin };
+  const [low, lowMargin] = known !== null && known.margin > 0 ? [known.efficiency, known.margin] : [LOWEST, marginAt(LOWEST)];
+  if (lowMargin <= 0) return answer(null, `it liquefies at any efficiency, even at ${LOWEST * 100} %`);
+  const [high, highMargin] = known !== null && known.margin <= 0 ? [known.efficiency, known.margin] : [1, marginAt(1)];
+  if (highMargin > 0) {
+    return answer(
+      null,
+      highMargin === FAR_FROM_LIQUID
+        ? "even perfect expanders give no steady state below the surroundings' temperature"
+        : `even at 100 % the gas stays ${(highMargin / 1e3).toFixed(1)} kJ/kg above its dew point`,
+    );
+  }
+  return answer(bracketedRoot(marginAt, low, high, { tolerance: TOLERANCE }, lowMargin, highMargin), null);
+}
+
+function efficiencies({ loop }: CycleDefinition, expander: string | undefined): number[] {
+  return loop.flatMap((entry) => {
+    const key = blockKind(entry.kind)?.liquefactionKey;
+    const value = key === undefined || (expander !== undefined && entry.name !== expander) ? undefined : given(entry, key);
+    return value === undefined ? [] : [value];
+  });
+}
+
+function withEfficiency(definition: CycleDefinition, efficiency: number, expander: string | undefined): CycleDefinition {
+  const loop = definition.loop.map((entry) => {
+    const key = blockKind(entry.kind)?.liquefactionKey;
+    if (key === undefined || (expander !== undefined && entry.name !== expander)) return entry;
+    return { ...entry, values: { ...entry.values, [key]: efficiency } };
+  });
+  return { ...definition, loop };
+}

@@ -1,0 +1,44 @@
+import { assemble } from "./assemble.js";
+import type { CycleDefinition } from "./definition.js";
+import { liquefactionMargin, liquefactionThreshold } from "./liquefaction.js";
+import { buildNetwork } from "./network.js";
+import type { Liquefaction, SteadyState } from "./result.js";
+import { settle } from "./settle.js";
+
+/** What a solution is to include. */
+export interface SolveOptions {
+  /** Look for the efficiency at which it begins to liquefy, which takes a dozen solutions more. On unless false. */
+  readonly threshold?: boolean;
+  /** The expander that the threshold is about; left out, every expander at once. */
+  readonly thresholdOf?: string;
+  /** Look whether a colder steady state exists besides. On unless false. */
+  readonly lookColder?: boolean;
+}
+
+/**
+ * The steady state of a machine: of several, the warmest, which a machine cooling down from the surroundings reaches first.
+ *
+ * @throws NoSteadyState with the block, the quantity and what to change, where there is none
+ */
+export function solve(definition: CycleDefinition, options: SolveOptions = {}): SteadyState {
+  const network = buildNetwork(definition);
+  const assembled = assemble(network, settle(network, options.lookColder !== false));
+  const margin = liquefactionMargin(assembled.stations, definition.fluid);
+  const liquefaction: Liquefaction =
+    options.threshold === false
+      ? { reached: margin !== null && margin.margin < 0, margin: margin?.margin ?? null, where: margin?.where ?? null, parameter: "", required: null, reason: "not asked for", given: null }
+      : liquefactionThreshold(definition, margin, marginOf, options.thresholdOf);
+  return { ...assembled, liquefaction };
+}
+
+function marginOf(definition: CycleDefinition): number {
+  const network = buildNetwork(definition);
+  settle(network, false);
+  const { fluid } = network.setting;
+  let least = Infinity;
+  for (const { pressure, enthalpy } of network.streams) {
+    if (pressure >= fluid.criticalPressure || pressure < fluid.lowestSaturationPressure) continue;
+    least = Math.min(least, enthalpy - fluid.saturation(pressure).vapourEnthalpy);
+  }
+  return least;
+}
