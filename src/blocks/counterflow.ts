@@ -1,7 +1,7 @@
 import type { Fluid } from "../fluids/fluid.js";
 import { State } from "../fluids/state.js";
 import { leastOf } from "./least.js";
-import { bracketedRoot } from "./root.js";
+import { bracketedRoot } from "../fluids/root.js";
 
 /** One stream through an exchanger: what comes in, and the pressure at which it leaves. */
 export interface Side {

@@ -1,6 +1,6 @@
 import { given } from "../blocks/definition.js";
 import { blockKind } from "../blocks/registry.js";
-import { bracketedRoot } from "../blocks/root.js";
+import { bracketedRoot } from "../fluids/root.js";
 import { fluid as fluidNamed } from "../fluids/registry.js";
 import type { CycleDefinition } from "./definition.js";
 import { NoSteadyState } from "./failure.js";

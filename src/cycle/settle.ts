@@ -1,4 +1,4 @@
-import { bracketedRoot } from "../blocks/root.js";
+import { bracketedRoot } from "../fluids/root.js";
 import { OutOfRangeError } from "../fluids/errors.js";
 import { State } from "../fluids/state.js";
 import { NoSteadyState } from "./failure.js";
