@@ -1,0 +1,183 @@
+import { PressureCurve } from "./curve.js";
+import { OutOfRangeError } from "./errors.js";
+import type { DensitySearch } from "./density.js";
+import type { BubbleAndDewCurves, FluidData } from "./fluid-data.js";
+import type { HelmholtzEquation } from "./helmholtz.js";
+import { chebyshevNodes, Interpolant, polynomial } from "./polynomial.js";
+import { bracketedRoot } from "./root.js";
+import { GAS_SIDE, LIQUID_SIDE, TWO_PHASE_SIDE, type PhaseBoundary, type Saturation, type Side } from "./saturation.js";
+
+/** Points of each curve from which its inverse is guessed. */
+const GUESS_POINTS = 6;
+/** Share of the end's pressure by which the highest pressure with two phases lies below it. */
+const BELOW_END = 1e-12;
+/** Share of density within which a state counts as lying on the boundary. */
+const ROUND_OFF = 1e-9;
+
+/**
+ * The two-phase region of a mixture treated as one fluid: its bubble and dew temperatures follow from two published
+ * pressure curves, the saturated densities from the equation of state on those curves.
+ */
+export class BubbleDewBoundary implements PhaseBoundary {
+  readonly criticalTemperature: number;
+  readonly criticalPressure: number;
+  readonly criticalDensity: number;
+  readonly lowestPressure: number;
+
+  private readonly name: string;
+  private readonly lowest: number;
+  private readonly bubble: PressureCurve;
+  private readonly dew: PressureCurve;
+  private readonly bubbleGuess: Interpolant;
+  private readonly dewGuess: Interpolant;
+
+  constructor(
+    data: FluidData,
+    private readonly curves: BubbleAndDewCurves,
+    private readonly equation: HelmholtzEquation,
+    private readonly search: DensitySearch,
+  ) {
+    const { endTemperature, endPressure, endDensity, bubblePressure, dewPressure } = curves;
+    this.criticalTemperature = endTemperature;
+    this.criticalPressure = endPressure;
+    this.criticalDensity = endDensity * data.molarMass;
+    const lowest = data.range.minimumTemperature;
+    this.name = data.name;
+    this.lowest = lowest;
+    const whole = new PressureCurve(bubblePressure, endTemperature, endPressure, lowest, endTemperature);
+    this.bubble = new PressureCurve(bubblePressure, endTemperature, endPressure, lowest, firstPassing(whole, endPressure, lowest, endTemperature));
+    this.dew = new PressureCurve(dewPressure, endTemperature, endPressure, lowest, endTemperature);
+    this.lowestPressure = this.bubble.pressure(lowest);
+    const guess = (curve: PressureCurve): Interpolant => {
+      const temperatures = chebyshevNodes(lowest, curve.highest, GUESS_POINTS);
+      return new Interpolant(
+        temperatures.map((temperature) => Math.log(curve.pressure(temperature))),
+        temperatures.map((temperature) => 1 / temperature),
+      );
+    };
+    this.bubbleGuess = guess(this.bubble);
+    this.dewGuess = guess(this.dew);
+  }
+
+  bubblePressure(temperature: number): number {
+    return temperature > this.criticalTemperature ? NaN : this.bubble.pressure(temperature);
+  }
+
+  dewPressure(temperature: number): number {
+    return temperature > this.criticalTemperature ? NaN : this.dew.pressure(temperature);
+  }
+
+  side(temperature: number, pressure: number): Side {
+    if (pressure >= this.criticalPressure) return LIQUID_SIDE;
+    if (pressure <= this.dew.pressure(temperature)) return GAS_SIDE;
+    return pressure >= this.bubble.pressure(temperature) ? LIQUID_SIDE : TWO_PHASE_SIDE;
+  }
+
+  solve(pressure: number): Saturation {
+    const { equation, search } = this;
+    const logPressure = Math.log(pressure);
+    const bubbleTemperature = this.bubble.temperature(pressure, 1 / this.bubbleGuess.at(logPressure));
+    const liquidDensity = search.liquid(bubbleTemperature, pressure, this.liquidDensityGuess(bubbleTemperature));
+    equation.setState(liquidDensity);
+    const liquidEnthalpy = equation.enthalpy;
+    const liquidEntropy = equation.entropy;
+    const liquidHeatCapacity = equation.isobaricHeatCapacity();
+    const dewTemperature = this.dew.temperature(pressure, 1 / this.dewGuess.at(logPressure));
+    const vapourDensity = search.gas(dewTemperature, pressure);
+    equation.setState(vapourDensity);
+    return {
+      pressure,
+      bubbleTemperature,
+      dewTemperature,
+      liquidDensity,
+      vapourDensity,
+      liquidEnthalpy,
+      vapourEnthalpy: equation.enthalpy,
+      liquidEntropy,
+      vapourEntropy: equation.entropy,
+      liquidHeatCapacity,
+      vapourHeatCapacity: equation.isobaricHeatCapacity(),
+    };
+  }
+
+  lowestGasTemperature(pressure: number): number {
+    const { lowest } = this;
+    return pressure <= this.dew.pressure(lowest) ? lowest : this.dew.temperature(pressure, lowest);
+  }
+
+  /** The pressure at which volume, in proportion to quality as temperature is, comes to the density given. */
+  pressureInside(temperature: number, density: number): number {
+    const { equation, search, criticalPressure, lowestPressure } = this;
+    const dewPressure = this.dew.pressure(temperature);
+    if (density <= search.gas(temperature, dewPressure)) return NaN;
+    let bubblePressure = this.bubble.pressure(temperature);
+    if (temperature <= this.bubble.highest) {
+      if (density >= search.liquid(temperature, bubblePressure, this.liquidDensityGuess(temperature))) return NaN;
+    } else {
+      // Here the bubble curve runs above the end of the region.
+      equation.setTemperature(temperature);
+      equation.setDensity(density);
+      if (equation.pressure >= criticalPressure) return NaN;
+      bubblePressure = criticalPressure * (1 - BELOW_END);
+    }
+    const lighter = (pressure: number): number => {
+      const { bubbleTemperature, dewTemperature, liquidDensity, vapourDensity } = this.solve(pressure);
+      const quality = (temperature - bubbleTemperature) / (dewTemperature - bubbleTemperature);
+      return density * ((1 - quality) / liquidDensity + quality / vapourDensity) - 1;
+    };
+    const least = Math.max(dewPressure, lowestPressure);
+    const atLeast = lighter(least);
+    const atMost = lighter(bubblePressure);
+    if (!(atLeast >= -ROUND_OFF) || !(atMost <= ROUND_OFF)) {
+      throw new OutOfRangeError(this.name, {
+        quantity: `density at ${temperature} K`,
+        value: density,
+        minimum: density / (1 + atLeast),
+        maximum: density / (1 + atMost),
+        unit: "kg/m3",
+        reason: atLeast < 0 ? "where its liquid freezes" : "where the model's two-phase region ends short of the fluid beyond it",
+        subject: "two-phase states are",
+      });
+    }
+    if (atLeast <= 0) return least;
+    if (atMost >= 0) return bubblePressure;
+    return bracketedRoot(lighter, least, bubblePressure, {}, atLeast, atMost);
+  }
+
+  liquidDensityGuess(temperature: number): number {
+    return this.criticalDensity * polynomial(this.curves.guess.liquidDensity, this.distance(temperature));
+  }
+
+  vapourDensityGuess(temperature: number): number {
+    const compressibility = polynomial(this.curves.guess.vapourCompressibility, this.distance(temperature));
+    return this.dew.pressure(temperature) / (compressibility * this.equation.specificGasConstant * temperature);
+  }
+
+  private distance(temperature: number): number {
+    return Math.cbrt(Math.max(0, 1 - temperature / this.criticalTemperature));
+  }
+}
+
+/**
+ * K, the lowest temperature at which a curve reaches `pressure`: air's bubble-point curve rises a little above its end
+ * before coming down to it, and that last stretch is above the end of the two-phase region.
+ */
+function firstPassing(curve: PressureCurve, pressure: number, lowest: number, end: number): number {
+  const STEPS = 4096;
+  let low = lowest;
+  let high = end;
+  for (let i = 1; i < STEPS; i++) {
+    const temperature = lowest + ((end - lowest) * i) / STEPS;
+    if (curve.pressure(temperature) < pressure) low = temperature;
+    else {
+      high = temperature;
+      break;
+    }
+  }
+  for (let i = 0; i < 60; i++) {
+    const middle = 0.5 * (low + high);
+    if (curve.pressure(middle) < pressure) low = middle;
+    else high = middle;
+  }
+  return low;
+}
