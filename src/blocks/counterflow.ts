@@ -15,14 +15,21 @@ export interface Side {
   outletPressure: number;
 }
 
-/** Places inside at which the temperature difference is looked at first, as duty fractions from the warm end. */
-const LOOKS = [0.01, 0.125, 0.25, 0.375, 0.5, 0.625, 0.75, 0.875, 0.99];
-/** A difference inside smaller than this share of the largest one calls for a closer look. */
-const CLOSE = 0.1;
+/**
+ * Places inside at which the temperature difference is looked at first, as duty fractions from the warm end, besides those at which
+ * a stream changes phase; between them it runs smoothly.
+ */
+const LOOKS = [0.05, 0.3, 0.65, 0.95];
+/** A difference inside that is smaller than this share of the largest at an end, */
+const SMALL = 0.02;
+/** and than this share of a straight line between the ends, calls for a closer look. */
+const SAGGING = 0.03;
+/** Duty fraction to which the place of a phase change is found. */
+const KINK_TOLERANCE = 1e-10;
 /** K; a difference that misses its target by less is round-off of two flashes, not a crossing. */
 const ROUND_OFF = 1e-8;
-/** Segments with which the conductance is first summed, and the most. */
-const FIRST_SEGMENTS = 16;
+/** Pieces in which the conductance is first summed, an even number, and the most. */
+const FIRST_SEGMENTS = 32;
 const MOST_SEGMENTS = 4096;
 /** Relative change of the conductance on doubling the segments at which it counts as known (the contract asks 1e-3). */
 const CONDUCTANCE_TOLERANCE = 5e-4;
@@ -74,28 +81,55 @@ export class Counterflow {
     if (!(warmInlet - approach > coldInlet)) return 0;
     const coldOutlet = fluid.temperaturePressure(warmInlet - approach, cold.outletPressure, this.coldState).enthalpy;
     const warmOutlet = fluid.temperaturePressure(coldInlet + approach, warm.outletPressure, this.warmState).enthalpy;
-    const endsAllow = Math.min(
-      cold.massFlow * (coldOutlet - cold.enthalpy) - this.heatLeak,
-      warm.massFlow * (warm.enthalpy - warmOutlet),
-    );
+    const warmEndAllows = cold.massFlow * (coldOutlet - cold.enthalpy) - this.heatLeak;
+    const coldEndAllows = warm.massFlow * (warm.enthalpy - warmOutlet);
+    const endsAllow = Math.min(warmEndAllows, coldEndAllows);
     if (!(endsAllow > 0)) return 0;
-    if (!this.comesClose(endsAllow, approach)) return endsAllow;
+    // At one end the difference is the approach itself; only the other has to be computed.
+    const spareAtWarmEnd =
+      warmEndAllows <= coldEndAllows ? 0 : warmInlet - this.coldTemperature(endsAllow, 0) - approach;
+    const spareAtColdEnd =
+      warmEndAllows <= coldEndAllows ? this.warmTemperature(endsAllow, 1) - coldInlet - approach : 0;
+    if (!this.comesClose(endsAllow, approach, spareAtWarmEnd, spareAtColdEnd)) return endsAllow;
     const spare = (duty: number): number => this.smallestDifference(duty).value - approach;
     const spareThere = spare(endsAllow);
     if (spareThere >= -ROUND_OFF) return endsAllow;
     return bracketedRoot(spare, 0, endsAllow, {}, undefined, spareThere);
   }
 
-  /** Whether the difference somewhere inside is so near the approach that it has to be looked at closely. */
-  private comesClose(duty: number, approach: number): boolean {
-    let least = Infinity;
-    let most = 0;
-    for (const place of LOOKS) {
-      const spare = this.difference(duty, place) - approach;
-      if (spare < least) least = spare;
-      if (spare > most) most = spare;
+  /** Whether the difference somewhere inside is so small that it has to be looked at closely. */
+  private comesClose(duty: number, approach: number, first: number, last: number): boolean {
+    const small = SMALL * Math.max(first, last);
+    const isClose = (place: number): boolean => {
+      const straight = first + place * (last - first);
+      return this.difference(duty, place) - approach < Math.min(small, SAGGING * straight) - ROUND_OFF;
+    };
+    for (const place of LOOKS) if (isClose(place)) return true;
+    const { warm, cold } = this;
+    return (
+      this.isCloseAtPhaseChange(warm.pressure, warm.enthalpy, -duty / warm.massFlow, isClose, 0) ||
+      this.isCloseAtPhaseChange(cold.pressure, cold.enthalpy, (duty + this.heatLeak) / cold.massFlow, isClose, 1)
+    );
+  }
+
+  /**
+   * The same about where a stream's enthalpy, on its way from its inlet, passes its bubble and dew points; those of its inlet
+   * pressure do for a first look.
+   */
+  private isCloseAtPhaseChange(
+    pressure: number,
+    enthalpy: number,
+    change: number,
+    isClose: (place: number) => boolean,
+    inletPlace: 0 | 1,
+  ): boolean {
+    if (pressure >= this.fluid.criticalPressure || pressure < this.fluid.lowestSaturationPressure) return false;
+    const { liquidEnthalpy, vapourEnthalpy } = this.fluid.saturation(pressure);
+    for (const boundary of [liquidEnthalpy, vapourEnthalpy]) {
+      const passed = (boundary - enthalpy) / change;
+      if (passed > 0 && passed < 1 && isClose(inletPlace === 0 ? passed : 1 - passed)) return true;
     }
-    return least < CLOSE * most;
+    return false;
   }
 
   /** The smallest temperature difference (K) and the duty fraction from the warm end at which it stands. */
@@ -109,12 +143,13 @@ export class Counterflow {
     const places: number[] = [];
     const add = (pressure: number, change: number, enthalpyAt: (place: number) => number): void => {
       if (Math.max(pressure, pressure + change) >= fluid.criticalPressure) return;
+      if (Math.min(pressure, pressure + change) < fluid.lowestSaturationPressure) return;
       for (const boundary of ["liquidEnthalpy", "vapourEnthalpy"] as const) {
         const over = (place: number): number =>
           enthalpyAt(place) - fluid.saturation(pressure + place * change)[boundary];
         const first = over(0);
         const last = over(1);
-        if (first * last < 0) places.push(bracketedRoot(over, 0, 1, {}, first, last));
+        if (first * last < 0) places.push(bracketedRoot(over, 0, 1, { tolerance: KINK_TOLERANCE }, first, last));
       }
     };
     add(warm.pressure, warm.outletPressure - warm.pressure, (place) => warm.enthalpy - (place * duty) / warm.massFlow);
@@ -131,25 +166,30 @@ export class Counterflow {
    * segments whose number doubles until it changes by less than 0.1 %. Infinity where the difference vanishes.
    */
   conductance(duty: number): number {
-    let coarse = this.summedConductance(duty, this.segments);
-    while (this.segments < MOST_SEGMENTS) {
-      const fine = this.summedConductance(duty, 2 * this.segments);
+    for (;;) {
+      const { coarse, fine } = this.summedConductance(duty);
       if (!Number.isFinite(fine) || Math.abs(fine - coarse) <= CONDUCTANCE_TOLERANCE * fine) return fine;
+      if (this.segments >= MOST_SEGMENTS) return fine;
       this.segments *= 2;
-      coarse = fine;
     }
-    return coarse;
   }
 
-  private summedConductance(duty: number, segments: number): number {
-    let sum = 0;
+  /** The sum over `segments` pieces, and over half as many. */
+  private summedConductance(duty: number): { coarse: number; fine: number } {
+    const { segments } = this;
+    let fine = 0;
+    let coarse = 0;
     let before = this.difference(duty, 0);
+    let twoBefore = before;
     for (let segment = 1; segment <= segments; segment++) {
       const after = this.difference(duty, segment / segments);
-      sum += 1 / logarithmicMean(before, after);
+      fine += 1 / logarithmicMean(before, after);
       before = after;
+      if (segment % 2 !== 0) continue;
+      coarse += 2 / logarithmicMean(twoBefore, after);
+      twoBefore = after;
     }
-    return (sum * duty) / segments;
+    return { coarse: (coarse * duty) / segments, fine: (fine * duty) / segments };
   }
 
   /** The duty (W) that an exchanger of the given conductance (W/K) transfers. */
@@ -159,7 +199,7 @@ export class Counterflow {
     // The mean difference that the duty leaves, less the one that it needs: nearly straight in the duty.
     const spare = (duty: number): number => {
       if (duty === 0) return this.difference(0, 0);
-      const taken = this.summedConductance(duty, 2 * this.segments);
+      const taken = this.summedConductance(duty).fine;
       return duty / taken - duty / conductance;
     };
     for (;;) {

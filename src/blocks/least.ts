@@ -2,11 +2,14 @@
 const SAMPLES = 16;
 /** Width at which a smooth least place is known well enough: its value is then known to the square of this. */
 const WIDTH = 1e-7;
+/** How far beside an end or a corner f is tried, as a share of the way to the next sample. */
+const BESIDE = 1e-3;
 const GOLDEN = (3 - Math.sqrt(5)) / 2;
 
 /**
  * The least value of f between two arguments and where it stands: the least of evenly spread samples and of the corners
- * given, refined by golden sections between its neighbours (a corner is known exactly and is not refined).
+ * given, refined by golden sections between its neighbours. A corner is known exactly and needs refining only where f
+ * falls on from it; so does an end.
  */
 export function leastOf(
   f: (x: number) => number,
@@ -19,22 +22,27 @@ export function leastOf(
   places.sort((a, b) => a - b);
   let best = 0;
   let least = Infinity;
-  places.forEach((place, index) => {
+  for (const [index, place] of places.entries()) {
     const value = f(place);
     if (value < least) {
       least = value;
       best = index;
     }
-  });
-  const place = places[best] ?? from;
-  const found = { value: least, place };
-  const below = places[best - 1];
-  const above = places[best + 1];
-  for (const [low, high] of corners.includes(place) ? [[below, place], [place, above]] : [[below ?? place, above ?? place]]) {
-    if (low === undefined || high === undefined) continue;
-    const refined = goldenSections(f, low, high);
-    if (refined.value < found.value) Object.assign(found, refined);
   }
+  const place = places[best];
+  let found = { value: least, place };
+  const below = places[best - 1] ?? place;
+  const above = places[best + 1] ?? place;
+  const refine = (low: number, high: number): void => {
+    const refined = goldenSections(f, low, high);
+    if (refined.value < found.value) found = refined;
+  };
+  if (below < place && above > place && !corners.includes(place)) {
+    refine(below, above);
+    return found;
+  }
+  if (below < place && f(place - BESIDE * (place - below)) < least) refine(below, place);
+  if (above > place && f(place + BESIDE * (above - place)) < least) refine(place, above);
   return found;
 }
 

@@ -16,13 +16,13 @@ export interface Settled {
 /** J/kg per J/(kg K) of heat capacity, that is K: an assumed enthalpy that comes back within this has settled. */
 const SETTLED = 1e-9;
 /** K of ideal gas; the most that a tear may cool in one step, so that a steady state on the way is not stepped over. */
-const LONGEST_STEP = 30;
+const LONGEST_STEP = 40;
 /** Passes after which a machine counts as not settling. */
 const MOST_PASSES = 600;
 /** A step into states that cannot be evaluated is halved so often before the machine counts as having run out of range. */
 const MOST_HALVINGS = 24;
 /** Places between the steady state and the coldest liquid at which a colder one is looked for. */
-const COLDER = [0.04, 0.12, 0.25, 0.45, 0.7, 0.95];
+const COLDER = [0.05, 0.2, 0.45, 0.8];
 
 /**
  * Lets the machine cool down from the surroundings' temperature until a pass changes nothing.
