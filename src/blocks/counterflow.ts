@@ -29,10 +29,10 @@ const KINK_TOLERANCE = 1e-10;
 /** K; a difference that misses its target by less is round-off of two flashes, not a crossing. */
 const ROUND_OFF = 1e-8;
 /** Pieces in which the conductance is first summed, an even number, and the most. */
-const FIRST_SEGMENTS = 32;
+const FIRST_SEGMENTS = 20;
 const MOST_SEGMENTS = 4096;
-/** Relative change of the conductance on doubling the segments at which it counts as known (the contract asks 1e-3). */
-const CONDUCTANCE_TOLERANCE = 5e-4;
+/** Relative change of the conductance on doubling the segments at which it counts as known. */
+const CONDUCTANCE_TOLERANCE = 1e-3;
 
 /**
  * Two streams in counterflow, both followed along their real enthalpies. Places inside are duty fractions: 0 at the warm
@@ -174,22 +174,32 @@ export class Counterflow {
     }
   }
 
-  /** The sum over `segments` pieces, and over half as many. */
+  /** The sum over `segments` pieces, and over half as many, both broken where a stream changes phase. */
   private summedConductance(duty: number): { coarse: number; fine: number } {
     const { segments } = this;
+    const corners = this.kinks(duty).sort((a, b) => a - b);
     let fine = 0;
     let coarse = 0;
+    let place = 0;
+    let coarsePlace = 0;
     let before = this.difference(duty, 0);
-    let twoBefore = before;
-    for (let segment = 1; segment <= segments; segment++) {
-      const after = this.difference(duty, segment / segments);
-      fine += 1 / logarithmicMean(before, after);
+    let coarseBefore = before;
+    let corner = 0;
+    for (let segment = 1; segment <= segments; ) {
+      const isCorner = corner < corners.length && corners[corner] < segment / segments;
+      const next = isCorner ? corners[corner++] : segment / segments;
+      const after = this.difference(duty, next);
+      fine += (next - place) / logarithmicMean(before, after);
+      place = next;
       before = after;
-      if (segment % 2 !== 0) continue;
-      coarse += 2 / logarithmicMean(twoBefore, after);
-      twoBefore = after;
+      if (isCorner || segment % 2 === 0) {
+        coarse += (next - coarsePlace) / logarithmicMean(coarseBefore, after);
+        coarsePlace = next;
+        coarseBefore = after;
+      }
+      if (!isCorner) segment++;
     }
-    return { coarse: (coarse * duty) / segments, fine: (fine * duty) / segments };
+    return { coarse: coarse * duty, fine: fine * duty };
   }
 
   /** The duty (W) that an exchanger of the given conductance (W/K) transfers. */
