@@ -38,8 +38,8 @@ function isentropicCompression(fluid: Fluid, efficiency: number): Compression {
   };
 }
 
-/** Steps over a stage; twice as many agree to better than 1e-9 at a pressure ratio of 10. */
-const POLYTROPIC_STEPS = 8;
+/** Steps over a stage; twice as many agree to 1e-8 at a pressure ratio of 10. */
+const POLYTROPIC_STEPS = 16;
 
 /**
  * Every small pressure rise takes dh = v dp / efficiency: integrated over the logarithm of the pressure, in which the

@@ -24,14 +24,12 @@ const LOOKS = [0.05, 0.3, 0.65, 0.95];
 const SMALL = 0.02;
 /** and than this share of a straight line between the ends, calls for a closer look. */
 const SAGGING = 0.03;
-/** Duty fraction to which the place of a phase change is found. */
-const KINK_TOLERANCE = 1e-10;
 /** K; a difference that misses its target by less is round-off of two flashes, not a crossing. */
 const ROUND_OFF = 1e-8;
-/** Pieces in which the conductance is first summed, an even number, and the most. */
-const FIRST_SEGMENTS = 20;
-const MOST_SEGMENTS = 4096;
-/** Relative change of the conductance on doubling the segments at which it counts as known. */
+/** Pieces in which the conductance is first summed, and the most places between which it may come to be. */
+const FIRST_PIECES = 20;
+const MOST_PLACES = 600;
+/** Relative change of the conductance on halving its pieces at which it counts as known. */
 const CONDUCTANCE_TOLERANCE = 1e-3;
 
 /**
@@ -43,7 +41,8 @@ export class Counterflow {
   readonly cold: Side = { massFlow: NaN, enthalpy: NaN, pressure: NaN, outletPressure: NaN };
   /** W into the cold stream from outside */
   heatLeak = 0;
-  private segments = FIRST_SEGMENTS;
+  /** Places between which the conductance is summed; once made finer it stays so. */
+  private grid: number[] = Array.from({ length: FIRST_PIECES + 1 }, (_, i) => i / FIRST_PIECES);
   private readonly warmState = new State();
   private readonly coldState = new State();
 
@@ -149,7 +148,11 @@ export class Counterflow {
           enthalpyAt(place) - fluid.saturation(pressure + place * change)[boundary];
         const first = over(0);
         const last = over(1);
-        if (first * last < 0) places.push(bracketedRoot(over, 0, 1, { tolerance: KINK_TOLERANCE }, first, last));
+        if (!(first * last < 0)) continue;
+        // Over a few percent of pressure the boundary is all but straight: one correction of the straight line's place is exact
+        // to 1e-8, and saturation has to be solved at one pressure only that is not an end's.
+        const straight = first / (first - last);
+        places.push(Math.min(1, Math.max(0, straight + over(straight) / (first - last))));
       }
     };
     add(warm.pressure, warm.outletPressure - warm.pressure, (place) => warm.enthalpy - (place * duty) / warm.massFlow);
@@ -162,44 +165,48 @@ export class Counterflow {
   }
 
   /**
-   * Conductance (W/K) that the duty (W) takes: the integral of dQ/dT over the profile, by logarithmic mean differences of
-   * segments whose number doubles until it changes by less than 0.1 %. Infinity where the difference vanishes.
+   * Conductance (W/K) that the duty (W) takes: the integral of dQ/dT over the profile, by logarithmic mean differences of pieces
+   * that are halved where it matters until the whole changes by less than 0.1 %. Infinity where the difference vanishes.
    */
   conductance(duty: number): number {
     for (;;) {
-      const { coarse, fine } = this.summedConductance(duty);
-      if (!Number.isFinite(fine) || Math.abs(fine - coarse) <= CONDUCTANCE_TOLERANCE * fine) return fine;
-      if (this.segments >= MOST_SEGMENTS) return fine;
-      this.segments *= 2;
+      const taken = this.summedConductance(duty);
+      if (!Number.isFinite(taken) || this.grid.length >= MOST_PLACES || !this.refineGrid(duty, taken)) return taken;
     }
   }
 
-  /** The sum over `segments` pieces, and over half as many, both broken where a stream changes phase. */
-  private summedConductance(duty: number): { coarse: number; fine: number } {
-    const { segments } = this;
-    const corners = this.kinks(duty).sort((a, b) => a - b);
-    let fine = 0;
-    let coarse = 0;
-    let place = 0;
-    let coarsePlace = 0;
+  /** The sum over the pieces of the grid as it stands, so that it runs smoothly with the duty. */
+  private summedConductance(duty: number): number {
+    const { grid } = this;
+    let sum = 0;
     let before = this.difference(duty, 0);
-    let coarseBefore = before;
-    let corner = 0;
-    for (let segment = 1; segment <= segments; ) {
-      const isCorner = corner < corners.length && corners[corner] < segment / segments;
-      const next = isCorner ? corners[corner++] : segment / segments;
-      const after = this.difference(duty, next);
-      fine += (next - place) / logarithmicMean(before, after);
-      place = next;
+    for (let i = 1; i < grid.length; i++) {
+      const after = this.difference(duty, grid[i]);
+      sum += (grid[i] - grid[i - 1]) / logarithmicMean(before, after);
       before = after;
-      if (isCorner || segment % 2 === 0) {
-        coarse += (next - coarsePlace) / logarithmicMean(coarseBefore, after);
-        coarsePlace = next;
-        coarseBefore = after;
-      }
-      if (!isCorner) segment++;
     }
-    return { coarse: coarse * duty, fine: fine * duty };
+    return sum * duty;
+  }
+
+  /** Halves the pieces whose halving changes the sum noticeably; false where none does. */
+  private refineGrid(duty: number, taken: number): boolean {
+    const { grid } = this;
+    const noticeable = (CONDUCTANCE_TOLERANCE * taken) / (duty * (grid.length - 1));
+    const finer = [0];
+    let before = this.difference(duty, 0);
+    for (let i = 1; i < grid.length; i++) {
+      const middle = (grid[i - 1] + grid[i]) / 2;
+      const between = this.difference(duty, middle);
+      const after = this.difference(duty, grid[i]);
+      const half = middle - grid[i - 1];
+      const halved = half / logarithmicMean(before, between) + half / logarithmicMean(between, after);
+      if (Math.abs(halved - (2 * half) / logarithmicMean(before, after)) > noticeable) finer.push(middle);
+      finer.push(grid[i]);
+      before = after;
+    }
+    const refined = finer.length > grid.length;
+    this.grid = finer;
+    return refined;
   }
 
   /** The duty (W) that an exchanger of the given conductance (W/K) transfers. */
@@ -209,14 +216,13 @@ export class Counterflow {
     // The mean difference that the duty leaves, less the one that it needs: nearly straight in the duty.
     const spare = (duty: number): number => {
       if (duty === 0) return this.difference(0, 0);
-      const taken = this.summedConductance(duty).fine;
-      return duty / taken - duty / conductance;
+      return duty / this.summedConductance(duty) - duty / conductance;
     };
     for (;;) {
       const duty = bracketedRoot(spare, 0, most, {}, undefined, -most / conductance);
-      const segments = this.segments;
+      const pieces = this.grid.length;
       this.conductance(duty);
-      if (this.segments === segments) return duty;
+      if (this.grid.length === pieces) return duty;
     }
   }
 }

@@ -19,6 +19,9 @@ const SETTLED = 1e-9;
 const LONGEST_STEP = 40;
 /** Passes after which a machine counts as not settling. */
 const MOST_PASSES = 600;
+/** How much more than `SETTLED` the last pass may change: its round-off against that of the pass before. */
+const SETTLED_AGAIN = 10;
+const MOST_ATTEMPTS = 5;
 /** A step into states that cannot be evaluated is halved so often before the machine counts as having run out of range. */
 const MOST_HALVINGS = 24;
 /** Places between the steady state and the coldest liquid at which a colder one is looked for. */
@@ -45,10 +48,15 @@ export function settle(network: Network, lookColder: boolean): Settled {
   guarded(pass, () => pass.run(start, change));
   const capacity = heatCapacity(network);
   if (change.some((value) => value > SETTLED * capacity)) throw tooWarm(network, change);
-  const x = size === 1 ? coolOneTear(pass, start, change, capacity) : coolTears(pass, start, change, capacity);
-  const otherSteadyStates = lookColder && hasColder(network, pass, x, capacity);
-  guarded(pass, () => pass.run(x, change));
-  return { iterations: pass.count, otherSteadyStates };
+  for (let attempt = 1; ; attempt++) {
+    const x = size === 1 ? coolOneTear(pass, start, change, capacity) : coolTears(pass, start, change, capacity);
+    const otherSteadyStates = lookColder && hasColder(network, pass, x, capacity);
+    guarded(pass, () => pass.run(x, change));
+    if (largest(change) <= SETTLED_AGAIN * SETTLED * capacity) return { iterations: pass.count, otherSteadyStates };
+    // An exchanger has found on the way that it must be summed in finer pieces, and keeps to that from now on.
+    if (attempt === MOST_ATTEMPTS) throw unsettled(pass, largest(change) / capacity);
+    guarded(pass, () => pass.run(start, change));
+  }
 }
 
 /** Every tear at the surroundings' temperature, or at that of the hottest outlet that a block fixes. */

@@ -1,0 +1,109 @@
+import fc from "fast-check";
+import { describe, expect, it } from "vitest";
+import type { CycleDefinition } from "../../src/cycle/definition.js";
+import { NoSteadyState } from "../../src/cycle/failure.js";
+import { planProblems } from "../../src/cycle/plan.js";
+import { solve } from "../../src/cycle/solve.js";
+import { entry } from "./definitions.js";
+
+const between = (min: number, max: number) => fc.integer({ min: 0, max: 1000 }).map((n) => min + ((max - min) * n) / 1000);
+const percent = between(0.05, 1);
+
+const sizes = fc.oneof(
+  between(0.2, 1).map((effectiveness) => ({ effectiveness })),
+  between(0, 20).map((approach) => ({ approach })),
+  between(0.5, 300).map((conductance) => ({ conductance })),
+);
+const compression = fc.oneof(
+  percent.map((efficiency) => ({ efficiency })),
+  percent.map((polytropic) => ({ "polytropic-efficiency": Math.max(polytropic, 0.3) })),
+  percent.map((isothermal) => ({ "isothermal-efficiency": isothermal })),
+);
+const duties = fc.oneof(between(0, 400).map((heat) => ({ heat })), between(70, 290).map((temperature) => ({ "outlet-temperature": temperature })));
+
+/** Machines with one or two expanders or a valve, closed or open, of any quality: legal, and not all of them possible. */
+const machines = fc
+  .record({
+    stages: fc.integer({ min: 1, max: 2 }),
+    open: fc.boolean(),
+    volumeFlow: fc.boolean(),
+    throttled: fc.boolean(),
+    lowPressure: between(1.15e5, 3e5),
+    ratio: between(1.5, 30),
+    compression,
+    aftercooled: between(0, 25),
+    sizes: fc.tuple(sizes, sizes),
+    efficiencies: fc.tuple(percent, percent),
+    leak: between(0, 0.2),
+    duty: duties,
+    heatLeak: between(0, 10),
+    drop: between(0, 5e3),
+    flow: between(1e-3, 3e-2),
+  })
+  .map((m): CycleDefinition => {
+    const highPressure = m.lowPressure * m.ratio;
+    const middle = m.stages === 1 ? highPressure : Math.sqrt(m.lowPressure * (highPressure - 2 * m.drop));
+    const drop = { "pressure-drop": m.drop };
+    const expand = (name: string, pressure: number, efficiency: number) =>
+      m.throttled && name === "T2"
+        ? entry("valve", name, { "outlet-pressure": pressure })
+        : entry("expander", name, { "outlet-pressure": pressure, efficiency, "seal-leak": m.leak });
+    return {
+      title: "random machine",
+      fluid: "air",
+      surroundings: { temperature: 293.15, pressure: 101325, relativeHumidity: 0.5 },
+      circuit: m.open ? "open" : "closed",
+      flow: m.volumeFlow ? { kind: "inlet volume", value: m.flow / 1.2 } : { kind: "mass", value: m.flow },
+      loop: [
+        entry("compressor", "C1", { "outlet-pressure": highPressure, ...m.compression }),
+        entry("aftercooler", "A1", { approach: m.aftercooled, ...drop }),
+        entry("recuperator", "HX1", { ...m.sizes[0], ...drop }, "warm"),
+        ...(m.stages === 2
+          ? [expand("T1", middle, m.efficiencies[0]), entry("recuperator", "HX2", { ...m.sizes[1], "heat-leak": m.heatLeak }, "warm")]
+          : []),
+        expand("T2", m.lowPressure, m.efficiencies[1]),
+        entry("load", "L1", m.duty),
+        ...(m.stages === 2 ? [entry("recuperator", "HX2", {}, "cold")] : []),
+        entry("line", "P1", { "heat-leak": m.heatLeak }),
+        entry("recuperator", "HX1", { "pressure-drop": m.drop / 2 }, "cold"),
+      ],
+      branches: {},
+    };
+  })
+  .filter((definition) => planProblems(definition).length === 0);
+
+describe("a random legal machine", () => {
+  it("converges with its accounts closed, or says why it cannot", () => {
+    const counts = { solved: 0, refused: 0 };
+    fc.assert(
+      fc.property(machines, (definition) => {
+        try {
+          const result = solve(definition, { threshold: false });
+          counts.solved++;
+          expect(result.audit.energy).toBeLessThan(1e-8);
+          expect(result.audit.exergy).toBeLessThan(1e-8);
+          expect(result.solver.residual).toBeLessThan(1e-9);
+          expect(JSON.stringify(result)).not.toMatch(/NaN/);
+          for (const station of result.stations) {
+            expect(Number.isFinite(station.temperature + station.enthalpy + station.entropy + station.density)).toBe(true);
+          }
+          // The second law: nothing makes exergy, and no exchanger works against the temperatures.
+          const scale = Math.max(result.power.compression, 1);
+          for (const { block, destroyed } of result.exergy) expect(destroyed, block).toBeGreaterThan(-1e-7 * scale);
+          for (const block of result.blocks) {
+            if (typeof block.smallestDifference === "number") expect(block.smallestDifference).toBeGreaterThan(-1e-5);
+          }
+        } catch (error) {
+          if (!(error instanceof NoSteadyState)) throw error;
+          counts.refused++;
+          expect(error.reason.length).toBeGreaterThan(20);
+          expect(error.advice.length).toBeGreaterThan(10);
+          expect(error.message).not.toMatch(/NaN|undefined/);
+        }
+      }),
+      { seed: 20260101, numRuns: 1500 },
+    );
+    console.info(`random machines: ${counts.solved} solved, ${counts.refused} refused with a reason`);
+    expect(counts.solved).toBeGreaterThan(400);
+  });
+});
