@@ -11,6 +11,11 @@ import { GAS_SIDE, LIQUID_SIDE, TWO_PHASE_SIDE, type PhaseBoundary, type Saturat
 const GUESS_POINTS = 6;
 /** Share of the end's pressure by which the highest pressure with two phases lies below it. */
 const BELOW_END = 1e-12;
+/** Relative distances from a curve's end between which it is searched for a first passage of the end's pressure. */
+const FAR_BEFORE_END = 0.02;
+const NEAR_END = 1e-6;
+/** Halvings that exhaust double precision from there. */
+const HALVINGS = 50;
 /** Share of density within which a state counts as lying on the boundary. */
 const ROUND_OFF = 1e-9;
 
@@ -45,7 +50,7 @@ export class BubbleDewBoundary implements PhaseBoundary {
     this.name = data.name;
     this.lowest = lowest;
     const whole = new PressureCurve(bubblePressure, endTemperature, endPressure, lowest, endTemperature);
-    this.bubble = new PressureCurve(bubblePressure, endTemperature, endPressure, lowest, firstPassing(whole, endPressure, lowest, endTemperature));
+    this.bubble = new PressureCurve(bubblePressure, endTemperature, endPressure, lowest, firstPassing(whole, endPressure, endTemperature));
     this.dew = new PressureCurve(dewPressure, endTemperature, endPressure, lowest, endTemperature);
     this.lowestPressure = this.bubble.pressure(lowest);
     const guess = (curve: PressureCurve): Interpolant => {
@@ -159,22 +164,15 @@ export class BubbleDewBoundary implements PhaseBoundary {
 }
 
 /**
- * K, the lowest temperature at which a curve reaches `pressure`: air's bubble-point curve rises a little above its end
- * before coming down to it, and that last stretch is above the end of the two-phase region.
+ * K, the lowest temperature at which a curve reaches the pressure of its end: air's bubble-point curve rises a little
+ * above its end before it comes down to it, and that last stretch lies above the end of the two-phase region.
  */
-function firstPassing(curve: PressureCurve, pressure: number, lowest: number, end: number): number {
-  const STEPS = 4096;
-  let low = lowest;
-  let high = end;
-  for (let i = 1; i < STEPS; i++) {
-    const temperature = lowest + ((end - lowest) * i) / STEPS;
-    if (curve.pressure(temperature) < pressure) low = temperature;
-    else {
-      high = temperature;
-      break;
-    }
-  }
-  for (let i = 0; i < 60; i++) {
+function firstPassing(curve: PressureCurve, pressure: number, end: number): number {
+  let distance = FAR_BEFORE_END;
+  while (curve.pressure(end * (1 - distance)) < pressure && distance > NEAR_END) distance *= 0.8;
+  let low = end * (1 - distance / 0.8);
+  let high = end * (1 - distance);
+  for (let i = 0; i < HALVINGS; i++) {
     const middle = 0.5 * (low + high);
     if (curve.pressure(middle) < pressure) low = middle;
     else high = middle;

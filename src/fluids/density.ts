@@ -22,10 +22,11 @@ const STIFFENING = 8;
 
 /** Finds the density (kg/m3) at a temperature and pressure, on the side asked for. */
 export class DensitySearch {
+  readonly cubic: CubicGuess;
+
   private readonly name: string;
   private readonly criticalDensity: number;
   private readonly densest: number;
-  private readonly cubic: CubicGuess;
 
   constructor(
     data: FluidData,

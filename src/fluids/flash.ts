@@ -12,10 +12,6 @@ import { writeSinglePhase, writeTwoPhase } from "./write.js";
 
 /** Pa, at which saturated liquid has zero enthalpy and entropy. */
 const ZERO_PRESSURE = 101325;
-/** Share of the heat of vaporisation by which a guess of a saturated value may err. */
-const GUESS_MARGIN = 0.03;
-/** Share of the critical pressure up to which those guesses hold. */
-const GUESS_LIMIT = 0.85;
 /** Share by which a density may lie beyond the guessed saturated one and still be of the phase on that side. */
 const DENSITY_MARGIN = 0.25;
 /** Relative change of pressure or temperature up to which an old state starts a search better than a guess. */
@@ -111,7 +107,7 @@ export class Flash {
       side = GAS_SIDE;
     } else if (pressure < boundary.criticalPressure) {
       saturation = saturations.known(pressure);
-      side = saturation === undefined ? this.guessSide(kind, pressure, value) : sideOf(kind, saturation, value);
+      side = saturation === undefined ? this.points().side(kind, pressure, value) : sideOf(kind, saturation, value);
     }
     if (side !== TWO_PHASE_SIDE && this.findFast(kind, pressure, value, side, saturation, state)) {
       return this.write(pressure, side, state);
@@ -134,7 +130,7 @@ export class Flash {
 
   /** The fast search from the best start at hand; false unless it ends in the stable phase on `side`, in range. */
   private findFast(kind: Caloric, pressure: number, value: number, side: Side, saturation: Saturation | undefined, state: State): boolean {
-    const { caloric, equation, boundary, search } = this;
+    const { caloric, equation, boundary } = this;
     const change = (value - (kind === ENTHALPY ? state.enthalpy : state.entropy)) / state.isobaricHeatCapacity;
     const ratio = pressure / state.pressure;
     if (Math.abs(ratio - 1) < NEAR) {
@@ -148,18 +144,8 @@ export class Flash {
       }
     }
     const points = this.points();
-    let temperature = NaN;
-    if (side === GAS_SIDE || pressure >= boundary.criticalPressure) temperature = points.gasTemperature(kind, pressure, value);
-    let density: number;
-    if (side === LIQUID_SIDE && !(temperature > boundary.criticalTemperature)) {
-      temperature = points.liquidTemperature(kind, value);
-      equation.setTemperature(temperature);
-      density = search.compressed(pressure, boundary.liquidDensityGuess(temperature));
-    } else {
-      equation.setTemperature(temperature);
-      density = temperature < boundary.criticalTemperature ? search.virialGuess(temperature, pressure) : search.aboveGuess(temperature, pressure);
-    }
-    return caloric.refine(kind, pressure, value, temperature, density) && this.isStable(pressure, side, saturation);
+    points.place(kind, pressure, value, side);
+    return caloric.refine(kind, pressure, value, points.temperature, points.density) && this.isStable(pressure, side, saturation);
   }
 
   /** Whether the state found lies in range and on its side of the phase boundary, not in a continuation beyond it. */
@@ -192,20 +178,8 @@ export class Flash {
     return pressure > criticalPressure || side === LIQUID_SIDE ? "liquid" : "gas";
   }
 
-  /** The phase by guessed saturation, or two-phase where the guess is too rough to tell. */
-  private guessSide(kind: Caloric, pressure: number, value: number): Side {
-    if (pressure > GUESS_LIMIT * this.boundary.criticalPressure) return TWO_PHASE_SIDE;
-    const points = this.points();
-    const logPressure = Math.log(pressure);
-    const vapour = points.vapourLimit(kind, logPressure);
-    const liquid = points.liquidLimit(kind, logPressure);
-    const margin = GUESS_MARGIN * (vapour - liquid);
-    if (value > vapour + margin) return GAS_SIDE;
-    return value < liquid - margin ? LIQUID_SIDE : TWO_PHASE_SIDE;
-  }
-
   private points(): StartingPoints {
-    return (this.startingPoints ??= new StartingPoints(this.data, this.equation, this.boundary));
+    return (this.startingPoints ??= new StartingPoints(this.data, this.equation, this.boundary, this.search));
   }
 
   /** Between bubble and dew, with a bubble point colder than the range. */

@@ -1,4 +1,5 @@
 import type { IdealTerms } from "./fluid-data.js";
+import { TauPowers } from "./tau-powers.js";
 
 /** theta tau beyond which exp(-theta tau) is lost beside 1 in double precision. */
 const LOST_BESIDE_ONE = 40;
@@ -15,26 +16,32 @@ export class IdealHelmholtz {
   /** tau^2 * d2 alpha0 / d tau^2 */
   tau2 = 0;
 
-  private readonly powers: Float64Array;
+  private readonly coefficients: Float64Array;
+  private readonly exponents: Float64Array;
+  private readonly powers: TauPowers;
   private readonly einstein: Float64Array;
   private readonly offsetEinstein: Float64Array;
 
   constructor(private readonly terms: IdealTerms) {
-    this.powers = Float64Array.from(terms.powers.flat());
+    this.coefficients = Float64Array.from(terms.powers, ([n]) => n);
+    this.exponents = Float64Array.from(terms.powers, ([, t]) => t);
+    this.powers = new TauPowers(terms.powers.map(([, t]) => t));
     this.einstein = Float64Array.from(terms.einstein.flat());
     this.offsetEinstein = Float64Array.from(terms.offsetEinstein.flat());
   }
 
   setTau(tau: number): void {
-    const { powers, einstein, offsetEinstein } = this;
+    const { coefficients, exponents, einstein, offsetEinstein } = this;
     const { constant, linear, logarithm } = this.terms;
     const logTau = Math.log(tau);
     let value = constant + linear * tau + logarithm * logTau;
     let tau1 = linear * tau + logarithm;
     let tau2 = -logarithm;
-    for (let i = 0; i < powers.length; i += 2) {
-      const t = powers[i + 1];
-      const x = powers[i] * Math.exp(t * logTau);
+    if (coefficients.length > 0) this.powers.set(tau, logTau);
+    const { values } = this.powers;
+    for (let i = 0; i < coefficients.length; i++) {
+      const t = exponents[i];
+      const x = coefficients[i] * values[i];
       value += x;
       tau1 += t * x;
       tau2 += t * (t - 1) * x;
@@ -55,9 +62,9 @@ export class IdealHelmholtz {
       const n = offsetEinstein[i];
       const argument = offsetEinstein[i + 1] * tau;
       const d = offsetEinstein[i + 3];
-      const e = (offsetEinstein[i + 2] / d) * Math.exp(-argument);
+      const e = argument > LOST_BESIDE_ONE ? 0 : (offsetEinstein[i + 2] / d) * Math.exp(-argument);
       const share = 1 / (1 + e);
-      value += n * (argument + Math.log(d) + Math.log1p(e));
+      value += n * (argument + (d === 1 ? 0 : Math.log(d)) + (e === 0 ? 0 : Math.log1p(e)));
       tau1 += n * argument * share;
       tau2 += n * argument * argument * share * share * e;
     }

@@ -1,18 +1,26 @@
 import type { ResidualTerms } from "./fluid-data.js";
+import { TauPowers } from "./tau-powers.js";
 
-/** One factor of density that a term can carry: delta^d exp(-delta^l), or delta^d exp(-eta (delta - epsilon)^2). */
-interface DensityFactor {
-  readonly d: number;
+/** The exponential that terms share: exp(-delta^l), or exp(-eta (delta - epsilon)^2), or none. */
+interface Group {
   readonly l: number;
   readonly eta: number;
   readonly epsilon: number;
+  lowest: number;
+  highest: number;
 }
+
+/** Entries a power term takes in `terms` and in `places`. */
+const TERM = 4;
+const PLACES = 2;
+/** Entries a Gaussian term takes in `gaussians`. */
+const GAUSSIAN = 5;
 
 /**
  * The residual Helmholtz energy alphar(tau, delta) and its derivatives to second order, from the terms of any fluid.
  *
- * Every term is a function of tau times a function of delta. At a fixed temperature all terms with the same delta
- * function collapse to one coefficient, so a search for density touches few numbers and no exponent of tau.
+ * Every term is a function of tau times a function of delta. At a fixed temperature the terms that share an exponential
+ * of delta collapse to one polynomial in delta, so that a search for density touches few numbers and no power of tau.
  * Results are left in the fields; nothing is allocated after construction.
  */
 export class ResidualHelmholtz {
@@ -29,155 +37,162 @@ export class ResidualHelmholtz {
   /** tau * delta * d2 alphar / d tau d delta */
   tau1delta1 = 0;
 
-  // Power terms, ordered by the density factor they share.
-  private readonly exponents: Float64Array;
-  private readonly tauPowers: Float64Array;
-  private readonly termExponent: Int32Array;
-  private readonly n0: Float64Array;
-  private readonly n1: Float64Array;
-  private readonly n2: Float64Array;
-  private readonly firstTerm: Int32Array;
-  // Gaussian terms.
-  private readonly gaussians: readonly { n: number; t: number; beta: number; gamma: number; factor: number }[];
-  // Density factors, ordered by the exponential they share, and those exponentials ("groups").
-  private readonly d1: Float64Array;
-  private readonly d2: Float64Array;
-  private readonly power: Int32Array;
-  private readonly firstFactor: Int32Array;
-  private readonly groupL: Float64Array;
+  private readonly tauPowers: TauPowers;
+  /** Per power term: 1 if it adds to the same coefficient as the term before, else 0; then n, n t, n t (t - 1). */
+  private readonly terms: Float64Array;
+  /** Per power term: places of its tau power and of its coefficient. */
+  private readonly places: Int32Array;
+  /** Per Gaussian term: n, t, beta, gamma, place of its coefficient. */
+  private readonly gaussians: Float64Array;
+
+  // Groups: factor delta^lowest times the exponential, and a polynomial of `steps` coefficients from highest to lowest.
+  private readonly groupLowest: Int32Array;
+  private readonly groupSteps: Int32Array;
+  private readonly groupL: Int32Array;
   private readonly groupEta: Float64Array;
   private readonly groupEpsilon: Float64Array;
+  /** delta^0, delta^1... as far as groups need them */
   private readonly deltaPowers: Float64Array;
-  // Coefficients of the density factors at the current temperature: sum of n f(tau), n tau f', n tau^2 f''.
+  // Coefficients of the polynomials at the current temperature: sums of n f(tau), n tau f', n tau^2 f''.
   private readonly c0: Float64Array;
   private readonly c1: Float64Array;
   private readonly c2: Float64Array;
-  // Expansion of the density factors at delta = 0, for the virial coefficients.
+  // What a coefficient adds to the first and the second power of delta in an expansion at zero density.
   private readonly order1: Float64Array;
   private readonly order2: Float64Array;
 
-  constructor(terms: ResidualTerms) {
-    const factors: DensityFactor[] = [];
-    const factorOf = (wanted: DensityFactor): number => {
-      const found = factors.findIndex((factor) => same(factor, wanted));
-      return found >= 0 ? found : factors.push(wanted) - 1;
+  constructor({ powers, gaussians }: ResidualTerms) {
+    const groups: Group[] = [];
+    const groupOf = (l: number, eta: number, epsilon: number, d: number): Group => {
+      let group = groups.find((other) => other.l === l && other.eta === eta && other.epsilon === epsilon);
+      if (group === undefined) groups.push((group = { l, eta, epsilon, lowest: d, highest: d }));
+      group.lowest = Math.min(group.lowest, d);
+      group.highest = Math.max(group.highest, d);
+      return group;
     };
-    for (const [, , d, l] of terms.powers) factorOf({ d, l, eta: 0, epsilon: 0 });
-    for (const [, , d, eta, , , epsilon] of terms.gaussians) factorOf({ d, l: 0, eta, epsilon });
-    factors.sort((a, b) => a.eta - b.eta || a.epsilon - b.epsilon || a.l - b.l || a.d - b.d);
+    const ofPowers = powers.map(([, , d, l]) => groupOf(l, 0, 0, d));
+    const ofGaussians = gaussians.map(([, , d, eta, , , epsilon]) => groupOf(0, eta, epsilon, d));
+    const steps = groups.map(({ lowest, highest }) => highest - lowest + 1);
+    const coefficient = (group: Group, d: number): number => {
+      const index = groups.indexOf(group);
+      return steps.slice(0, index).reduce((sum, count) => sum + count, 0) + group.highest - d;
+    };
 
-    const exponents = [...new Set(terms.powers.map(([, t]) => t))].toSorted((a, b) => a - b);
-    this.exponents = Float64Array.from(exponents);
-    this.tauPowers = new Float64Array(exponents.length);
-    const sorted = terms.powers
-      .map(([n, t, d, l]) => ({ n, t, factor: factorOf({ d, l, eta: 0, epsilon: 0 }) }))
-      .toSorted((a, b) => a.factor - b.factor || a.t - b.t);
-    this.termExponent = Int32Array.from(sorted, ({ t }) => exponents.indexOf(t));
-    this.n0 = Float64Array.from(sorted, ({ n }) => n);
-    this.n1 = Float64Array.from(sorted, ({ n, t }) => n * t);
-    this.n2 = Float64Array.from(sorted, ({ n, t }) => n * t * (t - 1));
-    this.firstTerm = starts(factors.length, sorted.map(({ factor }) => factor));
-    this.gaussians = terms.gaussians.map(([n, t, d, eta, beta, gamma, epsilon]) => ({
-      n,
-      t,
-      beta,
-      gamma,
-      factor: factorOf({ d, l: 0, eta, epsilon }),
-    }));
+    const exponents = [...new Set(powers.map(([, t]) => t))];
+    this.tauPowers = new TauPowers(exponents);
+    const sorted = powers
+      .map(([n, t, d], i) => ({ n, t, place: coefficient(ofPowers[i], d) }))
+      .toSorted((a, b) => a.place - b.place);
+    this.terms = Float64Array.from(
+      sorted.flatMap(({ n, t, place }, i) => [i > 0 && sorted[i - 1].place === place ? 1 : 0, n, n * t, n * t * (t - 1)]),
+    );
+    this.places = Int32Array.from(sorted.flatMap(({ t, place }) => [exponents.indexOf(t), place]));
+    this.gaussians = Float64Array.from(
+      gaussians.flatMap(([n, t, d, , beta, gamma], i) => [n, t, beta, gamma, coefficient(ofGaussians[i], d)]),
+    );
 
-    const groups: DensityFactor[] = [];
-    const groupOf = factors.map((factor) => {
-      const found = groups.findIndex((group) => same({ ...group, d: 0 }, { ...factor, d: 0 }));
-      return found >= 0 ? found : groups.push(factor) - 1;
-    });
-    this.firstFactor = starts(groups.length, groupOf);
-    this.groupL = Float64Array.from(groups, ({ l }) => l);
+    this.groupLowest = Int32Array.from(groups, ({ lowest }) => lowest);
+    this.groupSteps = Int32Array.from(steps);
+    this.groupL = Int32Array.from(groups, ({ l }) => l);
     this.groupEta = Float64Array.from(groups, ({ eta }) => eta);
     this.groupEpsilon = Float64Array.from(groups, ({ epsilon }) => epsilon);
-    this.power = Int32Array.from(factors, ({ d }) => d);
-    this.d1 = Float64Array.from(factors, ({ d }) => d);
-    this.d2 = Float64Array.from(factors, ({ d }) => d * d);
-    this.deltaPowers = new Float64Array(Math.max(...factors.map(({ d, l }) => Math.max(d, l))) + 1);
-    this.c0 = new Float64Array(factors.length);
-    this.c1 = new Float64Array(factors.length);
-    this.c2 = new Float64Array(factors.length);
-    const atZero = ({ eta, epsilon }: DensityFactor): number => Math.exp(-eta * epsilon * epsilon);
-    this.order1 = Float64Array.from(factors, (factor) => (factor.d === 1 ? atZero(factor) : 0));
-    this.order2 = Float64Array.from(factors, (factor) => {
-      if (factor.d === 2) return atZero(factor);
-      if (factor.d !== 1) return 0;
-      return atZero(factor) * (2 * factor.eta * factor.epsilon - (factor.l === 1 ? 1 : 0));
-    });
+    this.deltaPowers = new Float64Array(1 + Math.max(...groups.map(({ l, lowest }) => Math.max(l, lowest))));
+    const count = steps.reduce((sum, size) => sum + size, 0);
+    this.c0 = new Float64Array(count);
+    this.c1 = new Float64Array(count);
+    this.c2 = new Float64Array(count);
+    this.order1 = new Float64Array(count);
+    this.order2 = new Float64Array(count);
+    for (const group of groups) {
+      const atZero = Math.exp(-group.eta * group.epsilon * group.epsilon);
+      if (group.lowest === 1) {
+        this.order1[coefficient(group, 1)] = atZero;
+        this.order2[coefficient(group, 1)] = atZero * (2 * group.eta * group.epsilon - (group.l === 1 ? 1 : 0));
+      }
+      if (group.lowest <= 2 && group.highest >= 2) this.order2[coefficient(group, 2)] = atZero;
+    }
   }
 
   /** Sets the temperature of the evaluations that follow. */
   setTau(tau: number): void {
-    const { exponents, tauPowers, termExponent, firstTerm, n0, n1, n2, c0, c1, c2 } = this;
+    const { tauPowers, terms, places, gaussians, c0, c1, c2 } = this;
     const logTau = Math.log(tau);
-    for (let i = 0; i < exponents.length; i++) tauPowers[i] = Math.exp(exponents[i] * logTau);
-    let term = 0;
-    for (let factor = 0; factor < c0.length; factor++) {
-      const end = firstTerm[factor + 1];
-      let sum0 = 0;
-      let sum1 = 0;
-      let sum2 = 0;
-      for (; term < end; term++) {
-        const x = tauPowers[termExponent[term]];
-        sum0 += n0[term] * x;
-        sum1 += n1[term] * x;
-        sum2 += n2[term] * x;
-      }
-      c0[factor] = sum0;
-      c1[factor] = sum1;
-      c2[factor] = sum2;
+    tauPowers.set(tau, logTau);
+    const powers = tauPowers.values;
+    let sum0 = 0;
+    let sum1 = 0;
+    let sum2 = 0;
+    for (let i = 0, j = 0; i < places.length; i += PLACES, j += TERM) {
+      const x = powers[places[i]];
+      const place = places[i + 1];
+      const same = terms[j];
+      c0[place] = sum0 = same * sum0 + terms[j + 1] * x;
+      c1[place] = sum1 = same * sum1 + terms[j + 2] * x;
+      c2[place] = sum2 = same * sum2 + terms[j + 3] * x;
     }
-    for (let i = 0; i < this.gaussians.length; i++) {
-      const { n, t, beta, gamma, factor } = this.gaussians[i];
-      const offset = tau - gamma;
-      const x = n * Math.exp(t * logTau - beta * offset * offset);
+    if (gaussians.length > 0) this.addGaussians(tau, logTau);
+  }
+
+  private addGaussians(tau: number, logTau: number): void {
+    const { gaussians, c0, c1, c2 } = this;
+    for (let i = 0; i < gaussians.length; i += GAUSSIAN) c0[gaussians[i + 4]] = c1[gaussians[i + 4]] = c2[gaussians[i + 4]] = 0;
+    for (let i = 0; i < gaussians.length; i += GAUSSIAN) {
+      const t = gaussians[i + 1];
+      const beta = gaussians[i + 2];
+      const offset = tau - gaussians[i + 3];
+      const place = gaussians[i + 4];
+      const x = gaussians[i] * Math.exp(t * logTau - beta * offset * offset);
       const slope = t - 2 * beta * tau * offset;
-      c0[factor] += x;
-      c1[factor] += x * slope;
-      c2[factor] += x * (slope * slope - t - 2 * beta * tau * tau);
+      c0[place] += x;
+      c1[place] += x * slope;
+      c2[place] += x * (slope * slope - t - 2 * beta * tau * tau);
     }
   }
 
   /** Leaves `delta1` and `delta2` at a density, at the current temperature: enough for pressure and its slope. */
   setDelta(delta: number): void {
-    const { deltaPowers, firstFactor, power, d1, d2, c0, groupEta } = this;
-    powersOf(delta, deltaPowers);
+    const { groupSteps, groupLowest, groupL, groupEta, deltaPowers, c0 } = this;
+    let power = 1;
+    for (let i = 0; i < deltaPowers.length; i++) {
+      deltaPowers[i] = power;
+      power *= delta;
+    }
     let first = 0;
     let second = 0;
-    let factor = 0;
-    for (let group = 0; group < groupEta.length; group++) {
-      const end = firstFactor[group + 1];
-      let sum0 = 0;
-      let sum1 = 0;
-      let sum2 = 0;
-      for (; factor < end; factor++) {
-        const x = c0[factor] * deltaPowers[power[factor]];
-        sum0 += x;
-        sum1 += x * d1[factor];
-        sum2 += x * d2[factor];
+    let place = 0;
+    for (let group = 0; group < groupSteps.length; group++) {
+      // Polynomial, its derivative and half its second derivative, by Horner's scheme.
+      const end = place + groupSteps[group];
+      let p0 = 0;
+      let p1 = 0;
+      let p2 = 0;
+      for (; place < end; place++) {
+        p2 = p2 * delta + p1;
+        p1 = p1 * delta + p0;
+        p0 = p0 * delta + c0[place];
       }
-      const l = this.groupL[group];
-      const eta = groupEta[group];
+      p1 *= delta;
+      p2 *= 2 * delta * delta;
+      // The factor before it, its logarithmic derivative, and its second derivative over itself.
+      const lowest = groupLowest[group];
+      const l = groupL[group];
+      let factor = deltaPowers[lowest];
+      let slope = lowest;
+      let bend = 0;
       if (l > 0) {
         const exponent = deltaPowers[l];
-        const e = Math.exp(-exponent);
-        const slope = l * exponent;
-        first += e * (sum1 - slope * sum0);
-        second += e * (sum2 - (1 + 2 * slope) * sum1 + slope * (slope + 1 - l) * sum0);
-      } else if (eta > 0) {
+        factor *= Math.exp(-exponent);
+        slope -= l * exponent;
+        bend = l * l * exponent;
+      } else if (groupEta[group] > 0) {
+        const eta = groupEta[group];
         const offset = delta - this.groupEpsilon[group];
-        const e = Math.exp(-eta * offset * offset);
-        const slope = 2 * eta * delta * offset;
-        first += e * (sum1 - slope * sum0);
-        second += e * (sum2 - (1 + 2 * slope) * sum1 + (slope * slope - 2 * eta * delta * delta) * sum0);
-      } else {
-        first += sum1;
-        second += sum2 - sum1;
+        factor *= Math.exp(-eta * offset * offset);
+        slope -= 2 * eta * delta * offset;
+        bend = 2 * eta * delta * (delta + offset);
       }
+      first += factor * (slope * p0 + p1);
+      second += factor * ((slope * (slope - 1) - bend) * p0 + 2 * slope * p1 + p2);
     }
     this.delta1 = first;
     this.delta2 = second;
@@ -185,56 +200,60 @@ export class ResidualHelmholtz {
 
   /** Leaves the value and all derivatives at a density, at the current temperature. */
   setDeltaFully(delta: number): void {
-    const { deltaPowers, firstFactor, power, d1, d2, c0, c1, c2, groupEta } = this;
-    powersOf(delta, deltaPowers);
+    const { groupSteps, groupLowest, groupL, groupEta, deltaPowers, c0, c1, c2 } = this;
+    let power = 1;
+    for (let i = 0; i < deltaPowers.length; i++) {
+      deltaPowers[i] = power;
+      power *= delta;
+    }
     let value = 0;
     let first = 0;
     let second = 0;
     let tau1 = 0;
     let tau2 = 0;
     let mixed = 0;
-    let factor = 0;
-    for (let group = 0; group < groupEta.length; group++) {
-      const end = firstFactor[group + 1];
-      let sum0 = 0;
-      let sum1 = 0;
-      let sum2 = 0;
-      let tau1sum0 = 0;
-      let tau1sum1 = 0;
-      let tau2sum0 = 0;
-      for (; factor < end; factor++) {
-        const deltaPower = deltaPowers[power[factor]];
-        const x = c0[factor] * deltaPower;
-        sum0 += x;
-        sum1 += x * d1[factor];
-        sum2 += x * d2[factor];
-        const y = c1[factor] * deltaPower;
-        tau1sum0 += y;
-        tau1sum1 += y * d1[factor];
-        tau2sum0 += c2[factor] * deltaPower;
+    let place = 0;
+    for (let group = 0; group < groupSteps.length; group++) {
+      const end = place + groupSteps[group];
+      let p0 = 0;
+      let p1 = 0;
+      let p2 = 0;
+      let q0 = 0;
+      let q1 = 0;
+      let r0 = 0;
+      for (; place < end; place++) {
+        p2 = p2 * delta + p1;
+        p1 = p1 * delta + p0;
+        p0 = p0 * delta + c0[place];
+        q1 = q1 * delta + q0;
+        q0 = q0 * delta + c1[place];
+        r0 = r0 * delta + c2[place];
       }
-      const l = this.groupL[group];
-      const eta = groupEta[group];
-      let e = 1;
-      let slope = 0;
-      let curve = 0;
+      p1 *= delta;
+      p2 *= 2 * delta * delta;
+      const lowest = groupLowest[group];
+      const l = groupL[group];
+      let factor = deltaPowers[lowest];
+      let slope = lowest;
+      let bend = 0;
       if (l > 0) {
         const exponent = deltaPowers[l];
-        e = Math.exp(-exponent);
-        slope = l * exponent;
-        curve = slope * (slope + 1 - l);
-      } else if (eta > 0) {
+        factor *= Math.exp(-exponent);
+        slope -= l * exponent;
+        bend = l * l * exponent;
+      } else if (groupEta[group] > 0) {
+        const eta = groupEta[group];
         const offset = delta - this.groupEpsilon[group];
-        e = Math.exp(-eta * offset * offset);
-        slope = 2 * eta * delta * offset;
-        curve = slope * slope - 2 * eta * delta * delta;
+        factor *= Math.exp(-eta * offset * offset);
+        slope -= 2 * eta * delta * offset;
+        bend = 2 * eta * delta * (delta + offset);
       }
-      value += e * sum0;
-      first += e * (sum1 - slope * sum0);
-      second += e * (sum2 - (1 + 2 * slope) * sum1 + curve * sum0);
-      tau1 += e * tau1sum0;
-      tau2 += e * tau2sum0;
-      mixed += e * (tau1sum1 - slope * tau1sum0);
+      value += factor * p0;
+      first += factor * (slope * p0 + p1);
+      second += factor * ((slope * (slope - 1) - bend) * p0 + 2 * slope * p1 + p2);
+      tau1 += factor * q0;
+      tau2 += factor * r0;
+      mixed += factor * (slope * q0 + q1 * delta);
     }
     this.value = value;
     this.delta1 = first;
@@ -257,21 +276,4 @@ export class ResidualHelmholtz {
     for (let i = 0; i < this.c0.length; i++) sum += this.c0[i] * this.order2[i];
     return 2 * sum;
   }
-}
-
-function powersOf(delta: number, into: Float64Array): void {
-  let x = 1;
-  for (let i = 0; i < into.length; i++) {
-    into[i] = x;
-    x *= delta;
-  }
-}
-
-function same(a: DensityFactor, b: DensityFactor): boolean {
-  return a.d === b.d && a.l === b.l && a.eta === b.eta && a.epsilon === b.epsilon;
-}
-
-/** Where each of `count` owners starts in a list sorted by owner, and the end of the list. */
-function starts(count: number, owners: readonly number[]): Int32Array {
-  return Int32Array.from({ length: count + 1 }, (_, owner) => owners.filter((other) => other < owner).length);
 }

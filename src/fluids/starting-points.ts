@@ -1,7 +1,9 @@
+import type { CubicGuess } from "./cubic-guess.js";
+import type { DensitySearch } from "./density.js";
 import type { FluidData } from "./fluid-data.js";
 import type { HelmholtzEquation } from "./helmholtz.js";
 import { chebyshevNodes, Interpolant } from "./polynomial.js";
-import type { PhaseBoundary } from "./saturation.js";
+import { GAS_SIDE, LIQUID_SIDE, TWO_PHASE_SIDE, type PhaseBoundary, type Side } from "./saturation.js";
 
 /** The property given beside pressure. */
 export type Caloric = 0 | 1;
@@ -15,34 +17,60 @@ const SATURATION_POINTS = 8;
 const THIN = 1e-9;
 /** Highest temperature of the saturation guesses over the critical one: nearer, the curves turn too sharply for a polynomial. */
 const NEARLY_CRITICAL = 0.985;
+/** The same for compressed liquid. */
+const LIQUID_LIMIT = 0.93;
+/** Share of the heat of vaporisation by which a guess of a saturated value may err. */
+const GUESS_MARGIN = 0.03;
+/** Share of the critical pressure up to which those guesses hold. */
+const GUESS_LIMIT = 0.85;
+/** Expansion coefficient times temperature of a simple liquid, roughly: share of v dp that is T ds. */
+const LIQUID_EXPANSION = 0.5;
+/** ln(p / pc) = 5.4 (1 - Tc / T) is roughly the vapour pressure of a simple fluid. */
+const VAPOUR_PRESSURE_SLOPE = 5.4;
+/** Departure of dense fluid from the ideal gas, in units of R Tc or R, beyond any in range. */
+const LARGEST_DEPARTURE = 6;
+/** Steps that bring the dense start within the cubic equation's own error. */
+const DENSE_STEPS = 5;
 
 /** One caloric property, enthalpy or entropy, turned roughly into temperature. */
 interface Guesses {
-  /** Ideal gas: K from J/kg; from J/(kg K) + R ln(p/Pa) the logarithm of K. */
+  /** Ideal gas: K from J/kg; the logarithm of K from J/(kg K) + R ln(p/Pa). */
   readonly ideal: Interpolant;
+  /** Its inverse. */
+  readonly ofIdeal: Interpolant;
   /** Saturated liquid: K from J/kg or J/(kg K). */
   readonly liquid: Interpolant;
+  /** Value in saturated liquid at `LIQUID_LIMIT` of the critical temperature. */
+  readonly liquidEnd: number;
   /** Value in saturated liquid and vapour from ln(p/Pa). */
   readonly liquidLimit: Interpolant;
   readonly vapourLimit: Interpolant;
 }
 
 /**
- * Starting values for the flashes. Polynomials through a few states that the equation itself gives when a fluid is first
- * used; no result comes from them.
+ * Starting values for the searches from pressure and enthalpy or entropy. Polynomials through a few states that the
+ * equation itself gives when a fluid is first used, and a cubic equation of state; no result comes from them.
  */
 export class StartingPoints {
+  /** K, after the last `place` */
+  temperature = NaN;
+  /** kg/m3 */
+  density = NaN;
+
   private readonly guesses: readonly [enthalpy: Guesses, entropy: Guesses];
+  private readonly cubic: CubicGuess;
   private readonly specificGasConstant: number;
 
   constructor(
-    data: FluidData,
-    equation: HelmholtzEquation,
+    { range }: FluidData,
+    private readonly equation: HelmholtzEquation,
     private readonly boundary: PhaseBoundary,
+    private readonly search: DensitySearch,
   ) {
     const { criticalTemperature } = boundary;
-    const { minimumTemperature, maximumTemperature } = data.range;
+    const { minimumTemperature, maximumTemperature } = range;
     this.specificGasConstant = equation.specificGasConstant;
+    this.cubic = search.cubic;
     const hot = chebyshevNodes(minimumTemperature, maximumTemperature, IDEAL_POINTS);
     const ideal = hot.map((temperature) => {
       equation.setTemperature(temperature);
@@ -54,9 +82,11 @@ export class StartingPoints {
     );
     const logPressures = cold.map(({ pressure }) => Math.log(pressure));
     const temperatures = cold.map(({ bubbleTemperature }) => bubbleTemperature);
-    const through = (liquid: number[], vapour: number[], idealGas: Interpolant): Guesses => ({
-      ideal: idealGas,
+    const through = (liquid: number[], vapour: number[], gas: number[], hotness: number[]): Guesses => ({
+      ideal: new Interpolant(gas, hotness),
+      ofIdeal: new Interpolant(hotness, gas),
       liquid: new Interpolant(liquid, temperatures),
+      liquidEnd: new Interpolant(temperatures, liquid).at(LIQUID_LIMIT * criticalTemperature),
       liquidLimit: new Interpolant(logPressures, liquid),
       vapourLimit: new Interpolant(logPressures, vapour),
     });
@@ -64,48 +94,120 @@ export class StartingPoints {
       through(
         cold.map(({ liquidEnthalpy }) => liquidEnthalpy),
         cold.map(({ vapourEnthalpy }) => vapourEnthalpy),
-        new Interpolant(ideal.map(({ enthalpy }) => enthalpy), hot),
+        ideal.map(({ enthalpy }) => enthalpy),
+        hot,
       ),
       through(
         cold.map(({ liquidEntropy }) => liquidEntropy),
         cold.map(({ vapourEntropy }) => vapourEntropy),
-        new Interpolant(ideal.map(({ entropy }) => entropy), hot.map(Math.log)),
+        ideal.map(({ entropy }) => entropy),
+        hot.map(Math.log),
       ),
     ];
   }
 
-  /** Roughly the value in saturated liquid at a pressure given by ln(p/Pa), below 0.9 of the critical one. */
-  liquidLimit(kind: Caloric, logPressure: number): number {
-    return this.guesses[kind].liquidLimit.at(logPressure);
+  /** The phase below the critical pressure (Pa), or two-phase where the guess is too rough to tell. */
+  side(kind: Caloric, pressure: number, value: number): Side {
+    if (pressure > GUESS_LIMIT * this.boundary.criticalPressure) return TWO_PHASE_SIDE;
+    const logPressure = Math.log(pressure);
+    const { vapourLimit, liquidLimit } = this.guesses[kind];
+    const vapour = vapourLimit.at(logPressure);
+    const liquid = liquidLimit.at(logPressure);
+    const margin = GUESS_MARGIN * (vapour - liquid);
+    if (value > vapour + margin) return GAS_SIDE;
+    return value < liquid - margin ? LIQUID_SIDE : TWO_PHASE_SIDE;
   }
 
-  /** Roughly the value in saturated vapour. */
-  vapourLimit(kind: Caloric, logPressure: number): number {
-    return this.guesses[kind].vapourLimit.at(logPressure);
+  /** Leaves temperature and density from which to search for the state of a phase, the liquid side above the critical pressure. */
+  place(kind: Caloric, pressure: number, value: number, side: Side): void {
+    const { boundary, equation, search } = this;
+    const dense = pressure >= boundary.criticalPressure;
+    if (side === LIQUID_SIDE && this.placeLiquid(kind, pressure, value, dense)) return;
+    const gas = this.gasTemperature(kind, pressure, value);
+    const temperature = dense ? this.denseTemperature(kind, pressure, value, gas) : gas;
+    equation.setTemperature(temperature);
+    this.temperature = temperature;
+    this.density =
+      dense || temperature >= boundary.criticalTemperature
+        ? search.aboveGuess(temperature, pressure)
+        : search.virialGuess(temperature, pressure);
   }
 
-  /** Temperature (K) of liquid with about this enthalpy or entropy. */
-  liquidTemperature(kind: Caloric, value: number): number {
-    return this.guesses[kind].liquid.at(value);
+  /** False where the value is not surely that of a liquid. */
+  private placeLiquid(kind: Caloric, pressure: number, value: number, dense: boolean): boolean {
+    const { boundary, equation, search } = this;
+    const { criticalTemperature, criticalPressure } = boundary;
+    const { liquid, liquidEnd } = this.guesses[kind];
+    if (dense && value > liquidEnd) return false;
+    const first = liquid.at(value);
+    // The same temperature at saturation: h less (1 - expansion) v dp, s more expansion v dp / T
+    const vapourPressure = criticalPressure * Math.exp(VAPOUR_PRESSURE_SLOPE * (1 - criticalTemperature / first));
+    const work = (pressure - vapourPressure) / boundary.liquidDensityGuess(first);
+    const saturated = kind === ENTHALPY ? value - (1 - LIQUID_EXPANSION) * work : value + (LIQUID_EXPANSION * work) / first;
+    const temperature = dense ? Math.min(liquid.at(saturated), NEARLY_CRITICAL * criticalTemperature) : liquid.at(saturated);
+    equation.setTemperature(temperature);
+    this.temperature = temperature;
+    this.density = search.compressed(pressure, boundary.liquidDensityGuess(temperature));
+    return true;
   }
 
-  /** Temperature (K) of a gas with this enthalpy or entropy, its departure from the ideal gas by the second virial coefficient. */
-  gasTemperature(kind: Caloric, pressure: number, value: number): number {
+  /** K, of a gas, its departure from the ideal gas by the second virial coefficient. */
+  private gasTemperature(kind: Caloric, pressure: number, value: number): number {
     const { ideal } = this.guesses[kind];
     const { criticalTemperature, criticalPressure } = this.boundary;
-    const reducedPressure = pressure / criticalPressure;
+    const reducedPressure = Math.min(1, pressure / criticalPressure);
     const sum = kind === ENTHALPY ? value : value + this.specificGasConstant * Math.log(pressure);
-    let temperature = kind === ENTHALPY ? ideal.at(sum) : Math.exp(ideal.at(sum));
+    const first = kind === ENTHALPY ? ideal.at(sum) : Math.exp(ideal.at(sum));
     // Pitzer and Curl's second virial coefficient of simple fluids, J. Am. Chem. Soc. 79 (1957) 2369.
-    const inverse = Math.min(2, criticalTemperature / temperature);
-    const inverse2 = inverse * inverse;
+    const inverse = Math.min(2, criticalTemperature / first);
+    const square = inverse * inverse;
     if (kind === ENTHALPY) {
-      const departure = reducedPressure * (0.1445 - 0.66 * inverse - 0.4155 * inverse2 - 0.0484 * inverse * inverse2);
-      temperature = ideal.at(sum - departure * this.specificGasConstant * criticalTemperature);
-    } else {
-      const departure = -reducedPressure * (0.33 + 0.277 * inverse + 0.0363 * inverse2) * inverse2;
-      temperature = Math.exp(ideal.at(sum - departure * this.specificGasConstant));
+      const departure = reducedPressure * (0.1445 - 0.66 * inverse - 0.4155 * square - 0.0484 * inverse * square);
+      return ideal.at(sum - departure * this.specificGasConstant * criticalTemperature);
+    }
+    const departure = -reducedPressure * (0.33 + 0.277 * inverse + 0.0363 * square) * square;
+    return Math.exp(ideal.at(sum - departure * this.specificGasConstant));
+  }
+
+  /** K, of dense fluid, by the cubic equation: regula falsi (Illinois) around `first`. */
+  private denseTemperature(kind: Caloric, pressure: number, value: number, first: number): number {
+    const { criticalTemperature } = this.boundary;
+    const { ideal } = this.guesses[kind];
+    const { specificGasConstant } = this;
+    let low = LIQUID_LIMIT * criticalTemperature;
+    let atLow = this.denseMiss(kind, pressure, value, low);
+    if (atLow < 0) return low;
+    const most = LARGEST_DEPARTURE * specificGasConstant;
+    let high =
+      kind === ENTHALPY
+        ? ideal.at(value + most * criticalTemperature)
+        : Math.exp(ideal.at(value + specificGasConstant * Math.log(pressure) + most));
+    let atHigh = this.denseMiss(kind, pressure, value, high);
+    let temperature = Math.max(low, Math.min(high, first));
+    let side = 0;
+    for (let i = 0; i < DENSE_STEPS; i++) {
+      const miss = this.denseMiss(kind, pressure, value, temperature);
+      if (miss > 0) {
+        low = temperature;
+        atLow = miss;
+        if (side > 0) atHigh *= 0.5;
+        side = 1;
+      } else {
+        high = temperature;
+        atHigh = miss;
+        if (side < 0) atLow *= 0.5;
+        side = -1;
+      }
+      temperature = low + ((high - low) * atLow) / (atLow - atHigh);
     }
     return temperature;
+  }
+
+  private denseMiss(kind: Caloric, pressure: number, value: number, temperature: number): number {
+    const { cubic } = this;
+    const { ofIdeal } = this.guesses[kind];
+    cubic.departures(temperature, pressure);
+    if (kind === ENTHALPY) return value - ofIdeal.at(temperature) - cubic.enthalpyDeparture;
+    return value + this.specificGasConstant * Math.log(pressure) - ofIdeal.at(Math.log(temperature)) - cubic.entropyDeparture;
   }
 }
