@@ -4,12 +4,12 @@ import { Fluid } from "./fluid.js";
 import type { FluidData } from "./fluid-data.js";
 
 /** Every fluid there is: its data file and a line here. */
-const data: readonly FluidData[] = [air];
+export const fluidData: readonly FluidData[] = [air];
 
 const made = new Map<string, Fluid>();
 
 /** The names that `fluid` knows. */
-export const fluidNames: readonly string[] = data.map(({ name }) => name);
+export const fluidNames: readonly string[] = fluidData.map(({ name }) => name);
 
 /**
  * A fluid by its name; the same object each time.
@@ -22,7 +22,7 @@ export const fluidNames: readonly string[] = data.map(({ name }) => name);
 export function fluid(name: string): Fluid {
   let found = made.get(name);
   if (found === undefined) {
-    const own = data.find((candidate) => candidate.name === name);
+    const own = fluidData.find((candidate) => candidate.name === name);
     if (own === undefined) throw new UnknownFluidError(name, fluidNames);
     found = new Fluid(own);
     made.set(name, found);
