@@ -3,12 +3,10 @@ import { OutOfRangeError } from "./errors.js";
 import type { DensitySearch } from "./density.js";
 import type { BubbleAndDewCurves, FluidData } from "./fluid-data.js";
 import type { HelmholtzEquation } from "./helmholtz.js";
-import { chebyshevNodes, Interpolant, polynomial } from "./polynomial.js";
+import { polynomial } from "./polynomial.js";
 import { bracketedRoot } from "./root.js";
 import { GAS_SIDE, LIQUID_SIDE, TWO_PHASE_SIDE, type PhaseBoundary, type Saturation, type Side } from "./saturation.js";
 
-/** Points of each curve from which its inverse is guessed. */
-const GUESS_POINTS = 6;
 /** Share of the end's pressure by which the highest pressure with two phases lies below it. */
 const BELOW_END = 1e-12;
 /** Relative distances from a curve's end between which it is searched for a first passage of the end's pressure. */
@@ -33,8 +31,6 @@ export class BubbleDewBoundary implements PhaseBoundary {
   private readonly lowest: number;
   private readonly bubble: PressureCurve;
   private readonly dew: PressureCurve;
-  private readonly bubbleGuess: Interpolant;
-  private readonly dewGuess: Interpolant;
 
   constructor(
     data: FluidData,
@@ -53,15 +49,6 @@ export class BubbleDewBoundary implements PhaseBoundary {
     this.bubble = new PressureCurve(bubblePressure, endTemperature, endPressure, lowest, firstPassing(whole, endPressure, endTemperature));
     this.dew = new PressureCurve(dewPressure, endTemperature, endPressure, lowest, endTemperature);
     this.lowestPressure = this.bubble.pressure(lowest);
-    const guess = (curve: PressureCurve): Interpolant => {
-      const temperatures = chebyshevNodes(lowest, curve.highest, GUESS_POINTS);
-      return new Interpolant(
-        temperatures.map((temperature) => Math.log(curve.pressure(temperature))),
-        temperatures.map((temperature) => 1 / temperature),
-      );
-    };
-    this.bubbleGuess = guess(this.bubble);
-    this.dewGuess = guess(this.dew);
   }
 
   bubblePressure(temperature: number): number {
@@ -80,14 +67,13 @@ export class BubbleDewBoundary implements PhaseBoundary {
 
   solve(pressure: number): Saturation {
     const { equation, search } = this;
-    const logPressure = Math.log(pressure);
-    const bubbleTemperature = this.bubble.temperature(pressure, 1 / this.bubbleGuess.at(logPressure));
+    const bubbleTemperature = this.bubble.temperature(pressure);
     const liquidDensity = search.liquid(bubbleTemperature, pressure, this.liquidDensityGuess(bubbleTemperature));
     equation.setState(liquidDensity);
     const liquidEnthalpy = equation.enthalpy;
     const liquidEntropy = equation.entropy;
     const liquidHeatCapacity = equation.isobaricHeatCapacity();
-    const dewTemperature = this.dew.temperature(pressure, 1 / this.dewGuess.at(logPressure));
+    const dewTemperature = this.dew.temperature(pressure);
     const vapourDensity = search.gas(dewTemperature, pressure);
     equation.setState(vapourDensity);
     return {
@@ -107,7 +93,7 @@ export class BubbleDewBoundary implements PhaseBoundary {
 
   lowestGasTemperature(pressure: number): number {
     const { lowest } = this;
-    return pressure <= this.dew.pressure(lowest) ? lowest : this.dew.temperature(pressure, lowest);
+    return pressure <= this.dew.pressure(lowest) ? lowest : this.dew.temperature(pressure);
   }
 
   /** The pressure at which volume, in proportion to quality as temperature is, comes to the density given. */

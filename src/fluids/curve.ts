@@ -1,4 +1,5 @@
 import type { CurveTerms } from "./fluid-data.js";
+import { chebyshevNodes, Interpolant } from "./polynomial.js";
 
 /** Share of the logarithm of pressure left when an inversion has settled: the next Newton step is below round-off. */
 const SETTLED = 1e-9;
@@ -6,6 +7,8 @@ const SETTLED = 1e-9;
 const MOST_STEPS = 60;
 /** K, the narrowest bracket that still divides. */
 const NARROWEST = 1e-13;
+/** Points of the curve from which its inverse is guessed. */
+const GUESS_POINTS = 6;
 
 /**
  * A pressure curve ln(p / p_end) = (T_end / T) sum n (1 - T / T_end)^k along a phase boundary, both ways.
@@ -18,6 +21,7 @@ export class PressureCurve {
   private readonly powers: Float64Array;
   /** d ln p / d T at the last `logarithm`. */
   private slope = NaN;
+  private guess: Interpolant | undefined;
 
   constructor(
     terms: CurveTerms,
@@ -61,9 +65,22 @@ export class PressureCurve {
     return ratio * sum;
   }
 
-  /** K, at a pressure (Pa) that the curve passes; started from `guess` (K). */
-  temperature(pressure: number, guess: number): number {
+  /** K, roughly, at a pressure (Pa) that the curve passes. */
+  roughTemperature(pressure: number): number {
+    if (this.guess === undefined) {
+      const temperatures = chebyshevNodes(this.lowest, this.highest, GUESS_POINTS);
+      this.guess = new Interpolant(
+        temperatures.map((temperature) => this.logarithm(temperature)),
+        temperatures.map((temperature) => 1 / temperature),
+      );
+    }
+    return 1 / this.guess.at(Math.log(pressure / this.endPressure));
+  }
+
+  /** K, at a pressure (Pa) that the curve passes. */
+  temperature(pressure: number): number {
     const wanted = Math.log(pressure / this.endPressure);
+    const guess = this.roughTemperature(pressure);
     let { lowest: low, highest: high } = this;
     let temperature = guess > low && guess < high ? guess : 0.5 * (low + high);
     for (let i = 0; i < MOST_STEPS; i++) {

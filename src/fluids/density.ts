@@ -11,8 +11,8 @@ const PRESSURE_ROUND_OFF = 4e-16;
 const FAST_STEPS = 12;
 /** Steps of the bracketed search: 60 bisections exhaust double precision, the rest is margin. */
 const SAFE_STEPS = 200;
-/** The densest state looked at, over the critical density: denser than any liquid in range at 100 MPa. */
-const DENSEST = 4;
+/** The densest state looked at, over the critical density: denser than any fluid in range at 100 MPa. */
+const DENSEST = 6;
 /** Largest relative change of density in one fast step. */
 const LONGEST_STEP = 0.3;
 /** Ideal-gas density over the critical one below which two virial coefficients give a better start than a cubic equation. */

@@ -4,10 +4,12 @@ import { DensitySearch } from "./density.js";
 import { OutOfRangeError } from "./errors.js";
 import type { FluidData } from "./fluid-data.js";
 import { HelmholtzEquation } from "./helmholtz.js";
+import { MeltingLimit } from "./melting.js";
 import { SaturationCache } from "./saturation-cache.js";
 import { GAS_SIDE, LIQUID_SIDE, TWO_PHASE_SIDE, type PhaseBoundary, type Saturation, type Side } from "./saturation.js";
 import { ENTHALPY, ENTROPY, StartingPoints, type Caloric } from "./starting-points.js";
 import type { Phase, State } from "./state.js";
+import { VapourPressureBoundary } from "./vapour-pressure.js";
 import { writeSinglePhase, writeTwoPhase } from "./write.js";
 
 /** Pa, at which saturated liquid has zero enthalpy and entropy. */
@@ -18,6 +20,9 @@ const DENSITY_MARGIN = 0.25;
 const NEAR = 0.1;
 /** Share of a limiting temperature that a search may end beyond it, by round-off. */
 const ROUND_OFF = 1e-9;
+
+/** The same of a melting pressure, which is steep in temperature. */
+const MELTING_ROUND_OFF = 1e-8;
 
 /**
  * The flashes of one fluid: which phase or phases, and the state. Inputs have been checked before.
@@ -30,6 +35,8 @@ export class Flash {
   readonly boundary: PhaseBoundary;
   readonly saturations: SaturationCache;
 
+  readonly melting: MeltingLimit;
+
   private readonly search: DensitySearch;
   private readonly caloric: CaloricSearch;
   private startingPoints: StartingPoints | undefined;
@@ -40,12 +47,15 @@ export class Flash {
     this.boundary = phaseBoundary(data, this.equation, this.search);
     this.saturations = new SaturationCache(this.boundary);
     this.caloric = new CaloricSearch(data.name, this.equation, this.boundary, this.search);
+    const { minimumTemperature, maximumPressure, melting } = data.range;
+    this.melting = new MeltingLimit(melting, minimumTemperature, maximumPressure);
     const zero = this.boundary.solve(ZERO_PRESSURE);
     this.equation.moveZero(zero.liquidEnthalpy, zero.liquidEntropy);
   }
 
   temperaturePressure(temperature: number, pressure: number, state: State): State {
     const { boundary, equation } = this;
+    this.checkMelting(temperature, pressure);
     const side = temperature < boundary.criticalTemperature ? boundary.side(temperature, pressure) : GAS_SIDE;
     if (side === TWO_PHASE_SIDE) {
       if (pressure < boundary.lowestPressure) throw this.freezing(temperature, pressure);
@@ -87,6 +97,7 @@ export class Flash {
     equation.setTemperature(temperature);
     equation.setState(density);
     const { pressure, enthalpy, entropy } = equation;
+    this.checkMelting(temperature, pressure);
     const phase = this.phase(temperature, pressure, side);
     return writeSinglePhase(equation, temperature, density, pressure, enthalpy, entropy, phase, boundary.criticalPressure, state);
   }
@@ -98,11 +109,10 @@ export class Flash {
 
   pressureCaloric(kind: Caloric, pressure: number, value: number, state: State): State {
     const { boundary, saturations } = this;
-    const { minimumTemperature, maximumTemperature } = this.data.range;
     let saturation: Saturation | undefined;
     let side: Side = LIQUID_SIDE;
-    let low = minimumTemperature;
-    let high = maximumTemperature;
+    let low = NaN;
+    let high = this.data.range.maximumTemperature;
     if (pressure < boundary.lowestPressure) {
       side = GAS_SIDE;
     } else if (pressure < boundary.criticalPressure) {
@@ -122,6 +132,7 @@ export class Flash {
       else high = saturation.bubbleTemperature;
       if (this.findFast(kind, pressure, value, side, saturation, state)) return this.write(pressure, side, state);
     }
+    if (Number.isNaN(low)) low = this.melting.temperature(pressure);
     if (this.caloric.bracketed(kind, pressure, value, side, low, high) !== 0) {
       throw this.outOfRange(kind, pressure, value, side, low);
     }
@@ -154,6 +165,7 @@ export class Flash {
     const { temperature, density } = this.caloric;
     const { minimumTemperature, maximumTemperature } = this.data.range;
     if (!(temperature >= minimumTemperature * (1 - ROUND_OFF) && temperature <= maximumTemperature * (1 + ROUND_OFF))) return false;
+    if (pressure > this.melting.free && pressure > this.melting.pressure(temperature) * (1 + MELTING_ROUND_OFF)) return false;
     if (temperature >= boundary.criticalTemperature) return side === GAS_SIDE || pressure >= boundary.criticalPressure;
     if (side === GAS_SIDE) {
       if (density > (1 + DENSITY_MARGIN) * boundary.vapourDensityGuess(temperature)) return false;
@@ -180,6 +192,21 @@ export class Flash {
 
   private points(): StartingPoints {
     return (this.startingPoints ??= new StartingPoints(this.data, this.equation, this.boundary, this.search));
+  }
+
+  private checkMelting(temperature: number, pressure: number): void {
+    if (pressure <= this.melting.free) return;
+    const maximum = this.melting.pressure(temperature);
+    if (pressure <= maximum * (1 + MELTING_ROUND_OFF)) return;
+    throw new OutOfRangeError(this.data.name, {
+      quantity: `pressure at ${temperature} K`,
+      value: pressure,
+      minimum: 0,
+      maximum,
+      unit: "Pa",
+      reason: "where it freezes",
+      subject: "it is fluid",
+    });
   }
 
   /** Between bubble and dew, with a bubble point colder than the range. */
@@ -216,7 +243,7 @@ export class Flash {
 
 function phaseBoundary(data: FluidData, equation: HelmholtzEquation, search: DensitySearch): PhaseBoundary {
   if (data.phases.kind === "bubble-and-dew") return new BubbleDewBoundary(data, data.phases, equation, search);
-  throw new Error("not yet");
+  return new VapourPressureBoundary(data, data.phases, equation);
 }
 
 function sideOf(kind: Caloric, saturation: Saturation, value: number): Side {

@@ -27,6 +27,22 @@ export interface ValidRange {
   readonly maximumTemperature: number;
   /** Pa */
   readonly maximumPressure: number;
+  /** Where liquid freezes under pressure; missing where no curve is published. */
+  readonly melting?: MeltingCurve;
+}
+
+/**
+ * Melting pressure: p / p_0 = 1 + sum n ((T / T_0)^t - 1), or ln(p / p_0) = sum n (T / T_0 - 1)^t.
+ * It limits the range and enters no property.
+ */
+export interface MeltingCurve {
+  readonly kind: "powers" | "logarithm";
+  readonly source: string;
+  /** K */
+  readonly referenceTemperature: number;
+  /** Pa */
+  readonly referencePressure: number;
+  readonly terms: readonly (readonly [n: number, t: number])[];
 }
 
 /**

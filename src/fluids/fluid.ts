@@ -145,6 +145,17 @@ export class Fluid {
   }
 
   /**
+   * Lowest temperature (K) at a pressure (Pa): `minimumTemperature`, or under high pressure the melting temperature less 1 K
+   * of supercooling.
+   *
+   * @throws OutOfRangeError, NotFiniteError
+   */
+  lowestTemperature(pressure: number): number {
+    this.checkPressure(pressure);
+    return this.flash.melting.temperature(pressure);
+  }
+
+  /**
    * Both ends of the two-phase region at a pressure (Pa), remembered for the pressures used last.
    *
    * @throws OutOfRangeError from the critical pressure on, and below `lowestSaturationPressure`

@@ -1,10 +1,15 @@
 import { air } from "./data/air.js";
+import { argon } from "./data/argon.js";
+import { helium } from "./data/helium.js";
+import { neon } from "./data/neon.js";
+import { nitrogen } from "./data/nitrogen.js";
+import { oxygen } from "./data/oxygen.js";
 import { UnknownFluidError } from "./errors.js";
 import { Fluid } from "./fluid.js";
 import type { FluidData } from "./fluid-data.js";
 
 /** Every fluid there is: its data file and a line here. */
-export const fluidData: readonly FluidData[] = [air];
+export const fluidData: readonly FluidData[] = [air, nitrogen, argon, oxygen, neon, helium];
 
 const made = new Map<string, Fluid>();
 

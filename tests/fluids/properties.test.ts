@@ -13,14 +13,14 @@ const logBetween = (low: number, high: number, at: number): number => Math.exp(M
 describe.each(fluidNames)("%s", (name) => {
   const gas = fluid(name);
   const pressureAt = (at: number): number => logBetween(gas.lowestSaturationPressure * 1.000001, gas.maximumPressure, at);
-  const temperatureAt = (at: number): number => logBetween(gas.minimumTemperature, gas.maximumTemperature, at);
+  const temperatureAt = (at: number, pressure: number): number => logBetween(gas.lowestTemperature(pressure), gas.maximumTemperature, at);
 
   it("enthalpy and entropy rise with temperature at constant pressure", () => {
     assert(
       property(share, share, share, (a, b, c) => {
-        const [low, high] = [temperatureAt(Math.min(a, b)), temperatureAt(Math.max(a, b))];
-        pre(high > low * (1 + 1e-9));
         const pressure = pressureAt(c);
+        const [low, high] = [temperatureAt(Math.min(a, b), pressure), temperatureAt(Math.max(a, b), pressure)];
+        pre(high > low * (1 + 1e-9));
         const cold = gas.temperaturePressure(low, pressure, new State());
         const warm = gas.temperaturePressure(high, pressure, new State());
         expect(warm.enthalpy).toBeGreaterThan(cold.enthalpy);
@@ -33,7 +33,8 @@ describe.each(fluidNames)("%s", (name) => {
   it("temperature comes back from enthalpy and from entropy", () => {
     assert(
       property(share, share, (a, b) => {
-        const [temperature, pressure] = [temperatureAt(a), pressureAt(b)];
+        const pressure = pressureAt(b);
+        const temperature = temperatureAt(a, pressure);
         const state = gas.temperaturePressure(temperature, pressure, new State());
         const { density, enthalpy, entropy } = state;
         pre(state.phase !== "two-phase" || name === "air");
