@@ -1,0 +1,63 @@
+#!/usr/bin/env node
+import { readFileSync } from "node:fs";
+import { Command as Program, CommanderError, Option as ProgramOption } from "commander";
+import { WRONG_INPUT, type Command, type Terminal } from "./commands/command.js";
+import { explain } from "./commands/failure.js";
+import { commands } from "./commands/registry.js";
+
+const terminal: Terminal = {
+  write: (text) => void process.stdout.write(text.endsWith("\n") ? text : `${text}\n`),
+  tell: (text) => void process.stderr.write(text.endsWith("\n") ? text : `${text}\n`),
+  isTerminal: process.stdout.isTTY === true,
+  colour: process.stdout.isTTY === true && (process.env.NO_COLOR ?? "") === "" && process.env.TERM !== "dumb",
+};
+
+function register(program: Program, command: Command): void {
+  const entry = program.command(command.name).summary(command.summary).description(command.summary);
+  for (const { name, help, optional } of command.arguments) entry.argument(optional === true ? `[${name}]` : `<${name}>`, help);
+  for (const { flag, value, help, choices, default: fallback, repeatable } of command.options) {
+    const option = new ProgramOption(value === undefined ? flag : `${flag} <${value}>`, help);
+    if (choices !== undefined) option.choices(choices);
+    if (fallback !== undefined) option.default(fallback);
+    if (repeatable === true) option.argParser((text: string, before: string[] | undefined) => [...(before ?? []), text]);
+    entry.addOption(option);
+  }
+  const examples = command.examples.map(([line, answer]) => `  ${line}\n      ${answer}`).join("\n");
+  entry.addHelpText("after", `\nExamples:\n${examples}`);
+  entry.action(async (...given: unknown[]) => {
+    const words = given.slice(0, command.arguments.length) as (string | undefined)[];
+    const options = given[command.arguments.length] as Record<string, string | boolean | string[]>;
+    process.exitCode = await command.run({ arguments: words, options }, terminal);
+  });
+}
+
+// A reader that stops early, such as head, is no error.
+process.stdout.on("error", (error: NodeJS.ErrnoException) => {
+  if (error.code === "EPIPE") process.exit(0);
+  throw error;
+});
+
+const { version } = JSON.parse(readFileSync(new URL("../package.json", import.meta.url), "utf8")) as { version: string };
+
+const program = new Program("rimeloop")
+  .description("Steady state of small reverse-Brayton air coolers and liquefiers with real-gas properties")
+  .version(version, "--version", "print the version")
+  .helpOption("--help", "print help")
+  .configureHelp({ helpWidth: 100 })
+  .exitOverride()
+  .showSuggestionAfterError();
+for (const command of commands) register(program, command);
+for (const entry of program.commands) entry.exitOverride();
+
+try {
+  await program.parseAsync();
+} catch (error) {
+  if (error instanceof CommanderError) {
+    process.exitCode = error.exitCode === 0 ? 0 : WRONG_INPUT;
+  } else {
+    const status = explain(error, terminal);
+    if (status === null && process.env.RIMELOOP_DEBUG === "1") throw error;
+    if (status === null) terminal.tell(`rimeloop met a fault of its own (${String(error)}); please report it with the input. RIMELOOP_DEBUG=1 shows more.`);
+    process.exitCode = status ?? WRONG_INPUT;
+  }
+}

@@ -1,0 +1,33 @@
+/** A number with a fixed count of decimals; never "-0.00". */
+export function fixed(value: number, decimals: number): string {
+  const text = value.toFixed(decimals);
+  return /^-0(\.0*)?$/.test(text) ? text.slice(1) : text;
+}
+
+/** A number with a fixed count of significant digits, without exponent where it is of everyday size. */
+export function significant(value: number, digits: number): string {
+  if (value === 0) return "0";
+  const size = Math.floor(Math.log10(Math.abs(value)));
+  if (size < -4 || size > 8) return value.toExponential(digits - 1);
+  return fixed(value, Math.max(0, digits - 1 - size));
+}
+
+/** A fraction as a percentage. */
+export function percent(value: number, decimals = 1): string {
+  return `${fixed(value * 100, decimals)} %`;
+}
+
+/** Kelvin, and degrees Celsius where a thermometer would say so. */
+export function kelvin(value: number): string {
+  return `${fixed(value, 2)} K`;
+}
+
+/** Watts, in kW from 10 kW. */
+export function watts(value: number): string {
+  return Math.abs(value) >= 1e4 ? `${significant(value / 1e3, 4)} kW` : `${significant(value, 4)} W`;
+}
+
+/** Pascals as bar. */
+export function bars(value: number): string {
+  return `${significant(value / 1e5, 4)} bar`;
+}

@@ -1,0 +1,71 @@
+import type { CycleResult } from "../cycle/result.js";
+import { fixed, kelvin, percent, significant, watts } from "./numbers.js";
+import { wrap } from "./wrap.js";
+
+/** What the machine does, in a few lines, most important first. */
+export function summary(result: CycleResult): string {
+  return [coldEnd(result), refrigeration(result), liquefaction(result), power(result), ...limits(result)]
+    .map((line) => hanging(line))
+    .join("\n");
+}
+
+type Line = readonly [label: string, text: string];
+
+const LABEL = 18;
+
+function hanging([label, text]: Line): string {
+  return wrap(text, " ".repeat(LABEL)).replace(" ".repeat(LABEL), label.padEnd(LABEL));
+}
+
+function coldEnd({ coldEnd: { temperature, station }, stations }: CycleResult): Line {
+  const after = stations.find((each) => each.station === station)?.after ?? "";
+  return ["Cold end", `settles at ${kelvin(temperature)} (${fixed(temperature - 273.15, 1)} degC) behind ${after}, station ${station}`];
+}
+
+function refrigeration({ refrigeration: { capacity, loads }, performance }: CycleResult): Line {
+  if (loads.length === 0) return ["Refrigeration", "no load in the loop"];
+  const each = loads.map(({ name, heat, inletTemperature, outletTemperature }) => `${watts(heat)} at ${name}, gas from ${kelvin(inletTemperature)} to ${kelvin(outletTemperature)}`);
+  const { carnotCop } = performance;
+  const share = capacity > 0 && carnotCop !== null ? `; a reversible refrigerator would take ${watts(capacity / carnotCop)} for it` : "";
+  return ["Refrigeration", `lifts ${each.join("; ")}${share}`];
+}
+
+function liquefaction({ liquefaction: { reached, margin, where, required, given, reason, parameter }, liquid }: CycleResult): Line {
+  const state =
+    margin === null
+      ? "no station lies below the critical pressure"
+      : reached
+        ? `yes: ${liquid === null ? "liquid forms" : `${significant(liquid.massFlow * 1e3, 3)} g/s of liquid, ${percent(liquid.fractionOfFlow)} of the flow,`} behind ${where}`
+        : `no: behind ${where} the gas stays ${fixed(margin / 1e3, 2)} kJ/kg above its dew point`;
+  const subject = given === null ? parameter : `${parameter} (now ${percent(given)})`;
+  const threshold = required === null ? `no efficiency marks the start: ${reason}` : `it begins at ${percent(required, 2)} of ${subject}`;
+  return ["Liquefaction", `${state}; ${threshold}`];
+}
+
+function power({ power: bought, performance: { cop, secondLawEfficiency }, massFlow }: CycleResult): Line {
+  const figures = [
+    `${watts(bought.net)} bought for ${significant(massFlow * 1e3, 4)} g/s`,
+    `${watts(bought.compression)} into the gas, ${watts(bought.expansion)} out of it`,
+    ...(cop === null ? [] : [`COP ${significant(cop, 3)}`]),
+    ...(secondLawEfficiency === null ? [] : [`second-law efficiency ${percent(secondLawEfficiency, 2)}`]),
+  ];
+  return ["Power", figures.join("; ")];
+}
+
+/** The largest destroyers of what is bought, and the tightest exchanger. */
+function limits({ exergy, blocks }: CycleResult): Line[] {
+  const worst = exergy.toSorted((a, b) => b.destroyed - a.destroyed).slice(0, 3);
+  const losses = worst.map(({ block, share }) => `${block} ${percent(share, 0)}`).join(", ");
+  const pinches = blocks.flatMap(({ name, smallestDifference, smallestDifferenceAt }) =>
+    typeof smallestDifference === "number" && typeof smallestDifferenceAt === "number" ? [`${name} ${kelvin(smallestDifference)} ${place(smallestDifferenceAt)}`] : [],
+  );
+  const lines: Line[] = [["Most is lost in", `${losses} of all that is bought (table below)`]];
+  if (pinches.length > 0) lines.push(["Closest approach", pinches.join("; ")]);
+  return lines;
+}
+
+function place(share: number): string {
+  if (share < 0.005) return "at its warm end";
+  if (share > 0.995) return "at its cold end";
+  return `inside, where ${percent(share, 0)} of the duty has passed from the warm end`;
+}
