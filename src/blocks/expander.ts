@@ -6,6 +6,9 @@ import { efficiencyKey } from "./shared-keys.js";
 import { State } from "../fluids/state.js";
 import type { Unit } from "./unit.js";
 
+/** Vapour fraction behind a wheel below which droplets count as harmful (common practice, no source). */
+const DRY_ENOUGH = 0.9;
+
 /** Expands the gas with work. */
 export const expander: BlockKind = {
   kind: "expander",
@@ -115,6 +118,18 @@ function placeExpander({ entry, inlet, outlet }: Port, { fluid }: Setting): Unit
         outletVapourFraction: Number.isNaN(after.vapourFraction) ? null : after.vapourFraction,
         isentropicEnthalpyDrop: before.enthalpy - ideal,
       };
+    },
+    warnings() {
+      const arriving = flash(fluid, inlet).vapourFraction;
+      const leaving = flash(fluid, outlet).vapourFraction;
+      const warning = (code: string, message: string) => [{ code, block: entry.name, message }];
+      if (arriving < 1) {
+        return warning("wet-inlet", `the gas arrives wet (vapour fraction ${arriving.toFixed(3)}): droplets in the nozzle erode the wheel, and the efficiency given for dry gas will not be reached.`);
+      }
+      if (leaving < DRY_ENOUGH) {
+        return warning("wet-outlet", `a vapour fraction of ${leaving.toFixed(3)} behind the wheel: below about ${DRY_ENOUGH} droplets cost efficiency and wear the wheel (common practice, no source).`);
+      }
+      return [];
     },
   };
 }
