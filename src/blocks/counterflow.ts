@@ -26,9 +26,9 @@ const SMALL = 0.02;
 const SAGGING = 0.03;
 /** K; a difference that misses its target by less is round-off of two flashes, not a crossing. */
 const ROUND_OFF = 1e-8;
-/** Pieces in which the conductance is first summed, and the most places between which it may come to be. */
+/** Pieces in which the conductance is first summed, and the most that it may come to be. */
 const FIRST_PIECES = 20;
-const MOST_PLACES = 600;
+const MOST_PIECES = 600;
 /** Relative change of the conductance on halving its pieces at which it counts as known. */
 const CONDUCTANCE_TOLERANCE = 1e-3;
 
@@ -169,10 +169,42 @@ export class Counterflow {
    * that are halved where it matters until the whole changes by less than 0.1 %. Infinity where the difference vanishes.
    */
   conductance(duty: number): number {
+    let pieces = this.piecesOf(duty);
     for (;;) {
-      const taken = this.summedConductance(duty);
-      if (!Number.isFinite(taken) || this.grid.length >= MOST_PLACES || !this.refineGrid(duty, taken)) return taken;
+      const sum = pieces.reduce((total, piece) => total + piece.sum, 0);
+      if (!Number.isFinite(sum) || pieces.length >= MOST_PIECES) break;
+      const noticeable = (CONDUCTANCE_TOLERANCE * sum) / pieces.length;
+      let refined = false;
+      pieces = pieces.flatMap((piece) => {
+        if (piece.halved) return [piece];
+        const halves = this.halve(duty, piece);
+        piece.halved = true;
+        if (Math.abs(halves[0].sum + halves[1].sum - piece.sum) <= noticeable) return [piece];
+        refined = true;
+        return halves;
+      });
+      if (!refined) break;
     }
+    this.grid = [0, ...pieces.map(({ to }) => to)];
+    return duty * pieces.reduce((total, piece) => total + piece.sum, 0);
+  }
+
+  private piecesOf(duty: number): Piece[] {
+    const { grid } = this;
+    const pieces: Piece[] = [];
+    let before = this.difference(duty, 0);
+    for (let i = 1; i < grid.length; i++) {
+      const after = this.difference(duty, grid[i]);
+      pieces.push(pieceOf(grid[i - 1], grid[i], before, after));
+      before = after;
+    }
+    return pieces;
+  }
+
+  private halve(duty: number, { from, to, before, after }: Piece): [Piece, Piece] {
+    const middle = (from + to) / 2;
+    const between = this.difference(duty, middle);
+    return [pieceOf(from, middle, before, between), pieceOf(middle, to, between, after)];
   }
 
   /** The sum over the pieces of the grid as it stands, so that it runs smoothly with the duty. */
@@ -186,27 +218,6 @@ export class Counterflow {
       before = after;
     }
     return sum * duty;
-  }
-
-  /** Halves the pieces whose halving changes the sum noticeably; false where none does. */
-  private refineGrid(duty: number, taken: number): boolean {
-    const { grid } = this;
-    const noticeable = (CONDUCTANCE_TOLERANCE * taken) / (duty * (grid.length - 1));
-    const finer = [0];
-    let before = this.difference(duty, 0);
-    for (let i = 1; i < grid.length; i++) {
-      const middle = (grid[i - 1] + grid[i]) / 2;
-      const between = this.difference(duty, middle);
-      const after = this.difference(duty, grid[i]);
-      const half = middle - grid[i - 1];
-      const halved = half / logarithmicMean(before, between) + half / logarithmicMean(between, after);
-      if (Math.abs(halved - (2 * half) / logarithmicMean(before, after)) > noticeable) finer.push(middle);
-      finer.push(grid[i]);
-      before = after;
-    }
-    const refined = finer.length > grid.length;
-    this.grid = finer;
-    return refined;
   }
 
   /** The duty (W) that an exchanger of the given conductance (W/K) transfers. */
@@ -225,6 +236,21 @@ export class Counterflow {
       if (this.grid.length === pieces) return duty;
     }
   }
+}
+
+/** A part of the profile, with the temperature differences at its ends and its share of the conductance over the duty. */
+interface Piece {
+  readonly from: number;
+  readonly to: number;
+  readonly before: number;
+  readonly after: number;
+  readonly sum: number;
+  /** Whether halving it has been tried and changed nothing. */
+  halved: boolean;
+}
+
+function pieceOf(from: number, to: number, before: number, after: number): Piece {
+  return { from, to, before, after, sum: (to - from) / logarithmicMean(before, after), halved: false };
 }
 
 /**
