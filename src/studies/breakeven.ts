@@ -1,0 +1,95 @@
+import type { Override } from "../cyclefile/define.js";
+import { InputError } from "../cyclefile/errors.js";
+import type { CycleFile } from "../cyclefile/open.js";
+import type { Condition } from "./condition.js";
+import { crossings, type Edge, type Followed, type Sample, type Turn } from "./crossings.js";
+import { solvePoint } from "./point.js";
+import type { Variable } from "./variation.js";
+
+/** Places scanned for a change of sign. */
+const SCANNED = 60;
+/** Share of the span by which a bound that is itself illegal is kept away from. */
+const FROM_BOUND = 1e-3;
+/** A key without bounds is looked at from a tenth to ten times what the file gives, a temperature 50 K up and down. */
+const AROUND = 10;
+const AROUND_TEMPERATURE = 50;
+
+/** Where a condition turns as a number of the cycle file moves. Places are in the variable's unit. */
+export interface BreakEven {
+  readonly variable: Variable;
+  readonly condition: Condition;
+  /** The range looked at. */
+  readonly range: readonly [number, number];
+  /** Every place at which the condition turns, ascending. */
+  readonly turns: readonly Turn[];
+  /** Places at which steady states end without the condition turning there. */
+  readonly edges: readonly Edge[];
+  /** What the quantity is (SI) at both ends of the range, or why it is nothing. */
+  readonly ends: readonly [End, End];
+}
+
+/** One end of the range. */
+export interface End {
+  readonly x: number;
+  /** SI; null with a reason */
+  readonly value: number | null;
+  readonly met: boolean;
+  readonly reason: string | null;
+}
+
+/**
+ * The numbers of a variable at which a condition turns, each a root of the quantity followed as a continuous one.
+ *
+ * @param range in the variable's unit; left out, the key's legal range, or what lies around the file's own number
+ * @throws InputError where the variable moves in whole steps, or no range can be told
+ */
+export function breakEven(
+  file: CycleFile,
+  variable: Variable,
+  condition: Condition,
+  { range = defaultRange(variable), overrides = [] }: { range?: readonly [number, number] | undefined; overrides?: readonly Override[] } = {},
+): BreakEven {
+  if (variable.whole) throw refusal(variable, "a number that moves in whole steps", "a number that can take any value; sweep this one");
+  const [from, to] = range;
+  const follow: Followed = (x) => {
+    const point = solvePoint(file, [...overrides, variable.override(x)]);
+    if (point.status !== "solved") return { reason: point.reason };
+    return condition.excess(point.result) ?? { reason: `the machine has no ${condition.quantity.name}` };
+  };
+  const places = Array.from({ length: SCANNED + 1 }, (_, i) => (i === SCANNED ? to : from + ((to - from) * i) / SCANNED));
+  const { turns, edges, scan } = crossings(follow, places);
+  return { variable, condition, range, turns, edges, ends: [end(scan[0]), end(scan[SCANNED])] };
+
+  function end(sample: Sample): End {
+    if (sample.value === null) return { x: sample.x, value: null, met: false, reason: sample.reason };
+    const point = solvePoint(file, [...overrides, variable.override(sample.x)]);
+    const value = point.status === "solved" ? condition.quantity.get(point.result) : null;
+    return { x: sample.x, value, met: sample.value < 0, reason: null };
+  }
+}
+
+/** The key's legal range where it has two bounds; else what lies around the file's own number. */
+function defaultRange(variable: Variable): [number, number] {
+  const { about, given } = variable;
+  const { lowest, highest, open } = about.range;
+  const inUnit = (value: number | undefined): number | undefined => (value === undefined ? undefined : variable.fromSI(value));
+  let [from, to] = [inUnit(lowest), inUnit(highest)];
+  if (from === undefined || to === undefined) {
+    if (given === undefined || (given === 0 && about.dimension !== "temperature")) {
+      throw refusal(variable, "a number without a legal range and without a value to look around", `a range, as in ${variable.address}=1..10${variable.unit === undefined ? "" : ` ${variable.unit}`}`);
+    }
+    const si = variable.toSI(given);
+    const around = about.dimension === "temperature" ? [si - AROUND_TEMPERATURE, si + AROUND_TEMPERATURE] : [si / AROUND, si * AROUND];
+    from = Math.max(from ?? -Infinity, variable.fromSI(Math.min(...around)));
+    to = Math.min(to ?? Infinity, variable.fromSI(Math.max(...around)));
+  }
+  const margin = FROM_BOUND * (to - from);
+  const lowestSI = variable.toSI(from);
+  if ((open === "lowest" || open === "both") && lowestSI === lowest) from += margin;
+  if ((open === "highest" || open === "both") && variable.toSI(to) === highest) to -= margin;
+  return [from, to];
+}
+
+function refusal({ address }: Variable, found: string, expected: string): InputError {
+  return new InputError([{ code: "variation", place: `--vary ${address}`, line: 0, column: 0, found, expected }]);
+}
