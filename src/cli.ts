@@ -1,15 +1,16 @@
 #!/usr/bin/env node
 import { readFileSync } from "node:fs";
 import { Command as Program, CommanderError, Option as ProgramOption } from "commander";
-import { WRONG_INPUT, type Command, type Terminal } from "./commands/command.js";
+import { ANSWERED, WRONG_INPUT, type Command, type Terminal } from "./commands/command.js";
 import { explain } from "./commands/failure.js";
 import { commands } from "./commands/registry.js";
 
+const onTerminal = process.stdout.isTTY === true;
 const terminal: Terminal = {
   write: (text) => void process.stdout.write(text.endsWith("\n") ? text : `${text}\n`),
   tell: (text) => void process.stderr.write(text.endsWith("\n") ? text : `${text}\n`),
-  isTerminal: process.stdout.isTTY === true,
-  colour: process.stdout.isTTY === true && (process.env.NO_COLOR ?? "") === "" && process.env.TERM !== "dumb",
+  clear: () => void (onTerminal && process.stdout.write("\u001B[2J\u001B[3J\u001B[H")),
+  colour: onTerminal && (process.env.NO_COLOR ?? "") === "" && process.env.TERM !== "dumb",
 };
 
 function register(program: Program, command: Command): void {
@@ -32,10 +33,12 @@ function register(program: Program, command: Command): void {
 }
 
 // A reader that stops early, such as head, is no error.
-process.stdout.on("error", (error: NodeJS.ErrnoException) => {
-  if (error.code === "EPIPE") process.exit(0);
-  throw error;
-});
+for (const stream of [process.stdout, process.stderr]) {
+  stream.on("error", (error: NodeJS.ErrnoException) => {
+    if (error.code === "EPIPE") process.exit();
+    throw error;
+  });
+}
 
 const { version } = JSON.parse(readFileSync(new URL("../package.json", import.meta.url), "utf8")) as { version: string };
 
@@ -52,12 +55,6 @@ for (const entry of program.commands) entry.exitOverride();
 try {
   await program.parseAsync();
 } catch (error) {
-  if (error instanceof CommanderError) {
-    process.exitCode = error.exitCode === 0 ? 0 : WRONG_INPUT;
-  } else {
-    const status = explain(error, terminal);
-    if (status === null && process.env.RIMELOOP_DEBUG === "1") throw error;
-    if (status === null) terminal.tell(`rimeloop met a fault of its own (${String(error)}); please report it with the input. RIMELOOP_DEBUG=1 shows more.`);
-    process.exitCode = status ?? WRONG_INPUT;
-  }
+  if (error instanceof CommanderError) process.exitCode = error.exitCode === 0 ? ANSWERED : WRONG_INPUT;
+  else process.exitCode = await explain(error, terminal);
 }

@@ -4,7 +4,8 @@ import type { Override } from "../cyclefile/define.js";
 export interface Terminal {
   write(text: string): void;
   tell(text: string): void;
-  readonly isTerminal: boolean;
+  /** Empties the screen; does nothing where the answers go to a file or a pipe. */
+  clear(): void;
   readonly colour: boolean;
 }
 
@@ -39,6 +40,8 @@ export interface Input {
 export const ANSWERED = 0;
 export const NO_STEADY_STATE = 1;
 export const WRONG_INPUT = 2;
+/** A fault of the program itself, told apart from every answer. */
+export const FAULT = 70;
 
 /** A command of the program: one record says everything that help and the command line know of it. */
 export interface Command {

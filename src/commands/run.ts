@@ -1,5 +1,4 @@
 import { ANSWERED, fileArgument, settingsOf, setOption, type Command, type Input, type Terminal } from "./command.js";
-import { explain } from "./failure.js";
 
 /** Solves a machine and says what it does. */
 export const run: Command = {
@@ -18,13 +17,7 @@ export const run: Command = {
   async run(input, terminal) {
     if (input.options.watch !== true) return runOnce(input, terminal);
     const { watchFile } = await import("./watch.js");
-    return watchFile(input.arguments[0] ?? "", terminal, async () => {
-      try {
-        await runOnce(input, terminal);
-      } catch (error) {
-        if (explain(error, terminal) === null) throw error;
-      }
-    });
+    return watchFile(input.arguments[0] ?? "", terminal, () => runOnce(input, terminal));
   },
 };
 

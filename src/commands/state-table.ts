@@ -2,101 +2,106 @@ import { readFile } from "node:fs/promises";
 import { parse } from "csv-parse/sync";
 import { InputError, type LocatedProblem } from "../cyclefile/errors.js";
 import { nearest } from "../cyclefile/nearest.js";
-import { toSI, units } from "../cyclefile/units.js";
+import { toSI, unitNames, units, type Unit } from "../cyclefile/units.js";
 import { FluidError } from "../fluids/errors.js";
-import type { Fluid, FluidState } from "../fluids/fluid.js";
-import { pairOf } from "./state-input.js";
+import type { Fluid, FluidState, StateInput } from "../fluids/fluid.js";
+import { ATMOSPHERE, PAIRS, propertyCalled } from "./state-input.js";
 
 /** A row's state, or why it has none. */
 export interface StateRow {
+  /** Where it stands in the file. */
+  readonly line: number;
   readonly state?: FluidState;
-  readonly fault?: string;
+  /** Why the row has no state. */
+  readonly status?: string;
+  /** The row as such is wrong: its place, what stands there, what should. */
+  readonly problem?: LocatedProblem;
 }
 
-/** Names that a heading may give a property. */
-const HEADINGS: Readonly<Record<string, string>> = {
-  temperature: "temperature",
-  t: "temperature",
-  pressure: "pressure",
-  p: "pressure",
-  enthalpy: "enthalpy",
-  h: "enthalpy",
-  entropy: "entropy",
-  s: "entropy",
-  vapour: "quality",
-  density: "density",
-};
-const ATMOSPHERE = 101325;
+/** A row of cells and the line of the file on which it stands. */
+interface Row {
+  readonly cells: readonly string[];
+  readonly line: number;
+}
 
 interface HeadedColumn {
   readonly property: string;
   readonly index: number;
-  readonly unit: (typeof units)[string];
+  readonly unit: Unit;
 }
 
 /**
- * The states of a CSV file whose heading names properties with their units, "temperature (K)"; of more than two the first pair
- * that fixes a state counts, other columns are passed over.
+ * The states of a CSV file whose heading names properties with their units, as "temperature (K)" or "temperature_K"; of
+ * more than two the first pair that fixes a state counts, and columns that are no property are passed over. A row that
+ * has no state does not keep the others from theirs.
  *
  * @throws InputError where the file or its heading cannot be used
  */
 export async function readStates(path: string, gas: Fluid): Promise<StateRow[]> {
-  const refuse = (line: number, found: string, expected: string): never => {
-    const problem: LocatedProblem = { code: "state-table", place: line === 0 ? path : `${path}:${line}:1`, line, column: 1, found, expected };
-    throw new InputError([problem]);
-  };
-  let text = "";
-  try {
-    text = await readFile(path, "utf8");
-  } catch (error) {
-    refuse(0, `a file that cannot be read (${(error as NodeJS.ErrnoException).code ?? ""})`, "a CSV file");
+  const [heading, ...body] = await readRows(path);
+  const at = (line: number, found: string, expected: string): LocatedProblem => ({ code: "state-table", place: `${path}:${line}`, line, column: 0, found, expected });
+  if (heading === undefined) throw new InputError([at(1, "an empty file", "a heading such as temperature_K,pressure_bar, and rows of numbers")]);
+  const problems: LocatedProblem[] = [];
+  const columns = heading.cells.flatMap((text, index) => {
+    const column = headed(text, index);
+    if (column !== null && "expected" in column) problems.push(at(heading.line, column.found, column.expected));
+    return column === null || "expected" in column ? [] : [column];
+  });
+  if (problems.length > 0) throw new InputError(problems);
+  const pair = chosen(columns);
+  if (pair === undefined) {
+    throw new InputError([at(heading.line, `the heading "${heading.cells.join(",")}"`, "two columns that fix a state, such as temperature_K,pressure_bar")]);
   }
-  let rows: string[][] = [];
-  try {
-    rows = parse(text, { skip_empty_lines: true, trim: true, relax_column_count: true, bom: true });
-  } catch (error) {
-    refuse(1, `a table that cannot be read (${(error as Error).message})`, "comma-separated values");
-  }
-  const [heading, ...body] = rows;
-  if (heading === undefined) return refuse(1, "an empty file", "a heading and rows of states");
-  const columns = chosen(headed(heading, refuse));
-  if (columns === undefined) {
-    return refuse(1, `the heading ${heading.join(", ")}`, "two columns that fix a state, such as temperature (K) and pressure (bar)");
-  }
-  return body.map((cells, row): StateRow => {
+  return body.map(({ cells, line }): StateRow => {
     const given: Record<string, number> = {};
-    for (const { property, index, unit } of columns) {
+    for (const { property, index, unit } of pair) {
       const cell = cells[index] ?? "";
-      if (cell === "" || !Number.isFinite(Number(cell))) return { fault: `${path}:${row + 2}: "${cell}" is no number` };
+      if (cell === "" || !Number.isFinite(Number(cell))) {
+        return { line, status: "malformed", problem: at(line, cell === "" ? `no value for ${property}` : `"${cell}"`, `a number for ${property}`) };
+      }
       given[property] = toSI(Number(cell), unit, ATMOSPHERE);
     }
     try {
-      return { state: gas.at(pairOf(given, `${path}:${row + 2}`)) };
+      return { line, state: gas.at(given as unknown as StateInput) };
     } catch (error) {
       if (!(error instanceof FluidError)) throw error;
-      return { fault: `${path}:${row + 2}: ${error.message}` };
+      return { line, status: error.message };
     }
   });
 }
 
-function headed(heading: readonly string[], refuse: (line: number, found: string, expected: string) => never): HeadedColumn[] {
-  return heading.flatMap((text, index) => {
-    const match = /^([A-Za-z]+)(?:\s*\((.+)\)|_(.+))?$/.exec(text);
-    const property = HEADINGS[match?.[1].toLowerCase() ?? ""];
-    if (property === undefined) return [];
-    const name = match?.[2] ?? match?.[3];
-    if (name === undefined || property === "quality") return property === "quality" ? [{ property, index, unit: { kind: "fraction", factor: 1 } as const }] : refuse(1, `the heading "${text}" without a unit`, `${text} (unit)`);
-    const unit = Object.hasOwn(units, name) ? units[name] : undefined;
-    if (unit === undefined) return refuse(1, `the unknown unit "${name}"`, `a unit; the nearest is ${nearest(name, Object.keys(units)) ?? "none"}`);
-    return [{ property, index, unit }];
-  });
+async function readRows(path: string): Promise<Row[]> {
+  const refuse = (found: string, expected: string): never => {
+    throw new InputError([{ code: "state-table", place: path, line: 0, column: 0, found, expected }]);
+  };
+  try {
+    const text = await readFile(path, "utf8");
+    const options = { skip_empty_lines: true, trim: true, relax_column_count: true, bom: true, info: true };
+    const rows = parse(text, options) as unknown as { record: string[]; info: { lines: number } }[];
+    return rows.map(({ record, info }) => ({ cells: record, line: info.lines }));
+  } catch (error) {
+    const { code, message } = error as NodeJS.ErrnoException;
+    if (code === "ENOENT") return refuse("no such file", "a CSV file");
+    if (code === "EISDIR") return refuse("a directory", "a CSV file");
+    return refuse(`a table that cannot be read (${message.split("\n")[0]})`, "comma-separated values");
+  }
 }
 
-/** The first pair that fixes a state, pressure with temperature last: a wet state is not fixed by those of a pure fluid. */
+/** What a column's heading says; null where it names no property. */
+function headed(text: string, index: number): HeadedColumn | { found: string; expected: string } | null {
+  const forms = [/^(.+)$/, /^(.+)_([^_]+)$/, /^([^(]+?)\s*\((.+)\)$/].map((form) => form.exec(text));
+  const form = forms.find((found) => propertyCalled(found?.[1] ?? "") !== undefined);
+  const property = propertyCalled(form?.[1] ?? "");
+  if (property === undefined) return null;
+  const name = form?.[2];
+  if (property.kind === "fraction") return { property: property.name, index, unit: name === "%" ? units["%"] : { kind: "fraction", factor: 1 } };
+  const known = unitNames([property.kind]);
+  if (name === undefined) return { found: `the heading "${text}" without a unit`, expected: `${text}_${known[0]} or another of ${known.join(", ")}` };
+  if (known.includes(name)) return { property: property.name, index, unit: units[name] };
+  const near = nearest(name, known);
+  return { found: `the unit "${name}" for ${property.words}`, expected: `one of ${known.join(", ")}${near === undefined ? "" : `; did you mean "${near}"?`}` };
+}
+
 function chosen(columns: readonly HeadedColumn[]): HeadedColumn[] | undefined {
-  for (const pair of [["pressure", "enthalpy"], ["pressure", "entropy"], ["pressure", "quality"], ["temperature", "density"], ["temperature", "pressure"]]) {
-    const found = pair.flatMap((name) => columns.find(({ property }) => property === name) ?? []);
-    if (found.length === 2) return found;
-  }
-  return undefined;
+  return PAIRS.map((pair) => pair.flatMap((name) => columns.find(({ property }) => property === name) ?? [])).find((found) => found.length === 2);
 }

@@ -1,39 +1,42 @@
-import { watch } from "node:fs";
+import { watch, type FSWatcher } from "node:fs";
 import { basename, dirname } from "node:path";
-import { ANSWERED, type Terminal } from "./command.js";
+import { ANSWERED, WRONG_INPUT, type Terminal } from "./command.js";
+import { explain } from "./failure.js";
 
 /** Milliseconds in which the several events of one save arrive. */
 const SETTLE = 80;
 
 /**
- * Runs at once and again after every change of a file, until interrupted. The folder is watched, not the file: many
- * editors save by putting a new file in the old one's place.
+ * Runs at once and again after every change of a file, until interrupted; a run that fails says why and the watch goes
+ * on. The folder is watched, not the file: many editors save by putting a new file in the old one's place.
  */
-export async function watchFile(path: string, terminal: Terminal, run: () => Promise<void>): Promise<number> {
-  const clear = (): void => {
-    if (terminal.isTerminal) terminal.write("\u001B[2J\u001B[3J\u001B[H");
+export async function watchFile(path: string, terminal: Terminal, run: () => Promise<number>): Promise<number> {
+  const runOnce = async (): Promise<void> => {
+    terminal.clear();
+    await run().catch((error: unknown) => explain(error, terminal));
+    terminal.tell(`Watching ${path}; Ctrl-C ends.`);
   };
+  let timer: NodeJS.Timeout | undefined;
   let running = Promise.resolve();
-  const again = (): void => {
-    running = running.then(async () => {
-      clear();
-      await run();
-      terminal.tell(`Watching ${path}; Ctrl-C ends.`);
-    });
-  };
-  again();
-  await running;
-  await new Promise<void>((resolve) => {
-    let timer: NodeJS.Timeout | undefined;
-    const watcher = watch(dirname(path), (_event, name) => {
+  let watcher: FSWatcher;
+  try {
+    // The watch begins before the first run, so that no save in between is missed.
+    watcher = watch(dirname(path), (_event, name) => {
       if (name !== null && name !== basename(path)) return;
       clearTimeout(timer);
-      timer = setTimeout(again, SETTLE);
+      timer = setTimeout(() => (running = running.then(runOnce)), SETTLE);
     });
-    process.once("SIGINT", () => {
-      watcher.close();
-      resolve();
-    });
+  } catch (error) {
+    terminal.tell(`${dirname(path)}: a folder that cannot be watched (${(error as NodeJS.ErrnoException).code ?? String(error)})`);
+    return WRONG_INPUT;
+  }
+  running = running.then(runOnce);
+  await new Promise<void>((resolve) => {
+    process.once("SIGINT", resolve);
+    // A folder that is taken away ends the watch.
+    watcher.once("error", () => resolve());
   });
+  watcher.close();
+  clearTimeout(timer);
   return ANSWERED;
 }

@@ -28,29 +28,35 @@ export function figureText(value: unknown, { dimension }: Figure): string | unde
   return typeof value === "number" ? write(value) : undefined;
 }
 
+/** Columns before a block's figures: its name and kind. */
+const HEADING = 20;
+
 /** Every block with the figures that its kind reports, wrapped between figures. */
 export function blockFigures(blocks: readonly BlockResult[]): string {
-  return blocks.map((block) => oneBlock(block)).join("\n");
+  return blocks.map(oneBlock).join("\n");
 }
 
 function oneBlock(block: BlockResult): string {
-  const figures = blockKind(block.kind)?.figures ?? [];
-  const parts = figures.flatMap((figure) => {
+  const said = new Set<string>();
+  const parts = (blockKind(block.kind)?.figures ?? []).flatMap((figure) => {
     const text = figureText(block[figure.name], figure);
-    return text === undefined || isIdle(block[figure.name], figure) ? [] : [`${figure.label} ${text}`];
+    if (text === undefined || isIdle(block[figure.name], figure) || said.has(text)) return [];
+    // One stage's ratio is the whole ratio: what was just said is not said again under another name.
+    said.add(text);
+    return [`${figure.label} ${text}`];
   });
-  const heading = `${block.name} (${block.kind})  `;
+  const heading = `${block.name} (${block.kind})`.padEnd(HEADING - 1);
   const lines: string[] = [];
   let line = heading;
   parts.forEach((part, i) => {
-    const piece = i < parts.length - 1 ? `${part}; ` : part;
-    if (line.length > 4 && (line + piece.trimEnd()).length > WIDTH) {
-      lines.push(line.trimEnd());
-      line = "    ";
+    const piece = i < parts.length - 1 ? `${part};` : part;
+    if (line.trim() !== "" && line !== heading && line.length + 1 + piece.length > WIDTH) {
+      lines.push(line);
+      line = " ".repeat(HEADING - 1);
     }
-    line += piece;
+    line += ` ${piece}`;
   });
-  return [...lines, line.trimEnd()].join("\n");
+  return [...lines, line].join("\n");
 }
 
 /** A leak or a drop that was left at zero says nothing. */

@@ -17,7 +17,12 @@ export function percent(value: number, decimals = 1): string {
   return `${fixed(value * 100, decimals)} %`;
 }
 
-/** Kelvin, and degrees Celsius where a thermometer would say so. */
+/** A number for a spreadsheet: all its digits, less the noise of the last ones. */
+export function fullDigits(value: number): string {
+  return String(Number(value.toPrecision(12)));
+}
+
+/** Kelvin. */
 export function kelvin(value: number): string {
   return `${fixed(value, 2)} K`;
 }

@@ -19,14 +19,15 @@ export function report(result: CycleResult, colour: boolean): string {
     Array.isArray(profile) ? [section(`Temperatures in ${name}`, profileChart(profile as ProfilePoint[], colour))] : [],
   );
   return [
-    `${bold(result.title)}\n${setting}`,
+    `${bold(wrap(result.title))}\n${setting}`,
     summary(result),
+    warningLines(result),
     section("State points", stationTable(result.stations)),
     section("Blocks", blockFigures(result.blocks)),
     ...charts,
     section("Where the power goes", losses(result)),
-    notes(result),
-    section("Cautions", cautionsText(result.cautions)),
+    audited(result),
+    ...(result.cautions.length === 0 ? [] : [section("Cautions", cautionsText(result.cautions))]),
   ]
     .filter((part) => part !== "")
     .join("\n\n");
@@ -51,10 +52,18 @@ function losses({ exergy }: CycleResult): string {
   );
 }
 
-function notes({ solver, audit, warnings }: CycleResult): string {
-  const more = solver.otherSteadyStates
-    ? [wrap("A colder steady state exists too; this is the warmest, which a machine cooling down from the surroundings reaches first.")]
-    : [];
-  const audited = `Audit: first law ${audit.energy.toExponential(0)}, second law ${audit.exergy.toExponential(0)}, worst block ${solver.residual.toExponential(0)}; ${solver.iterations} passes.`;
-  return [...warnings.map(({ message, block }) => wrap(`Warning${block === null ? "" : `, ${block}`}: ${message}`)), ...more, audited].join("\n");
+/** What the user should know before reading on. */
+function warningLines({ solver, warnings }: CycleResult): string {
+  const lines = warnings.map(({ message, block }) => wrap(`Warning${block === null ? "" : `, ${block}`}: ${message}`));
+  if (solver.otherSteadyStates) {
+    lines.push(wrap("A colder steady state exists too; this is the warmest, which a machine cooling down from the surroundings reaches first."));
+  }
+  return lines.join("\n");
+}
+
+function audited({ solver, audit }: CycleResult): string {
+  const part = (value: number): string => value.toExponential(0);
+  return wrap(
+    `Audit: the first law closes to ${part(audit.energy)}, the second to ${part(audit.exergy)}, the worst block to ${part(solver.residual)} of the largest flow; ${solver.iterations} passes.`,
+  );
 }

@@ -1,6 +1,7 @@
 import type { FluidState } from "../fluids/fluid.js";
-import { fixed, significant } from "./numbers.js";
+import { fixed, fullDigits, significant } from "./numbers.js";
 import { writeTable, type Column, type TableFormat } from "./table.js";
+import { wrap } from "./wrap.js";
 
 /** A property of a state: its heading, unit and digits. */
 interface Property extends Column {
@@ -27,26 +28,46 @@ const PROPERTIES: readonly Property[] = [
 export function stateSheet(fluid: string, state: FluidState): string {
   const lines = PROPERTIES.map(({ name, unit = "", value, show }) => {
     const found = value(state);
-    if (found === null) return `  ${name.padEnd(24)}no meaning here`;
-    return `  ${name.padEnd(24)}${typeof found === "number" ? `${show(found)} ${unit}` : found}`.trimEnd();
+    const text = found === null ? `none (${phaseWords(state)})` : typeof found === "number" ? `${show(found)} ${unit}` : found;
+    return `  ${name.padEnd(25)}${text}`;
   });
   return [fluid, ...lines, "  (enthalpy and entropy are zero in the saturated liquid at 101.325 kPa)"].join("\n");
 }
 
-/** Many states, one a row; a row without a state says why. */
-export function stateList(rows: readonly { readonly state?: FluidState; readonly fault?: string }[], format: TableFormat): string {
-  const columns = PROPERTIES.filter(({ heading }) => format !== "text" || heading !== "u");
-  const cells = rows.map(({ state, fault }) => {
-    if (state === undefined) return [...columns.map(() => "-"), fault ?? ""];
-    return [
-      ...columns.map(({ value, show }) => {
-        const found = value(state);
-        if (found === null) return format === "csv" ? "" : "-";
-        if (typeof found === "string") return found;
-        return format === "csv" ? String(Number(found.toPrecision(12))) : show(found);
-      }),
-      "",
-    ];
+/** Why a property has no value at a state. */
+function phaseWords({ phase }: FluidState): string {
+  return phase === "two-phase" ? "between bubble and dew" : "above the critical pressure";
+}
+
+/** A state of a table, or why it has none. */
+export interface ListedState {
+  /** Line of the file that it was read from. */
+  readonly line: number;
+  readonly state?: FluidState;
+  readonly status?: string;
+}
+
+/** What a terminal's width has no room for in a list. */
+const ONLY_ELSEWHERE = new Set(["u", "cv"]);
+
+/** Many states, one a row. A row without a state says why: in its last column, or in text below the table. */
+export function stateList(rows: readonly ListedState[], format: TableFormat): string {
+  const isText = format === "text";
+  const properties = PROPERTIES.filter(({ heading }) => !isText || !ONLY_ELSEWHERE.has(heading));
+  const none = format === "csv" ? "" : "-";
+  const cell = ({ value, show }: Property, state: FluidState | undefined): string => {
+    const found = state === undefined ? null : value(state);
+    if (found === null) return none;
+    if (typeof found === "string") return found;
+    return format === "csv" ? fullDigits(found) : show(found);
+  };
+  const line: Column = { heading: "line" };
+  const status: Column = { heading: "status", align: "left" };
+  const columns = isText ? [line, ...properties] : [line, ...properties, status];
+  const cells = rows.map((row) => {
+    const shown = [String(row.line), ...properties.map((property) => cell(property, row.state))];
+    return isText ? shown : [...shown, row.status ?? "ok"];
   });
-  return writeTable(format, [...columns, { heading: rows.some(({ fault }) => fault !== undefined) ? "status" : "", align: "left" }], cells);
+  const without = isText ? rows.filter(({ status: reason }) => reason !== undefined) : [];
+  return [writeTable(format, columns, cells), ...without.map((row) => wrap(`line ${row.line}: ${row.status}`))].join("\n");
 }

@@ -1,6 +1,7 @@
 import type { Station } from "../cycle/result.js";
-import { fixed, significant } from "./numbers.js";
+import { fixed, fullDigits, significant } from "./numbers.js";
 import { writeTable, type Column, type TableFormat } from "./table.js";
+import { WIDTH } from "./wrap.js";
 
 /** A column of the state-point table, with its digits for reading and for a spreadsheet. */
 interface StationColumn extends Column {
@@ -9,7 +10,7 @@ interface StationColumn extends Column {
   readonly full: (station: Station) => string;
 }
 
-const number = (value: number | null): string => (value === null ? "" : String(Number(value.toPrecision(12))));
+const number = (value: number | null): string => (value === null ? "" : fullDigits(value));
 
 const COLUMNS: readonly StationColumn[] = [
   { heading: "no", shown: ({ station }) => String(station), full: ({ station }) => String(station) },
@@ -30,11 +31,24 @@ function vapour(fraction: number | null): string {
   return fraction === 0 || fraction === 1 ? String(fraction) : fixed(fraction, 4);
 }
 
-/** The state points of a cycle, in the order in which the gas passes them. Spreadsheet formats have all digits. */
+/** Columns that a terminal does without where long names leave no room, first the one missed least. */
+const SPARED = ["exergy", "s", "density"];
+
+/** The state points of a cycle, in the order in which the gas passes them. Spreadsheet formats have all digits and columns. */
 export function stationTable(stations: readonly Station[], format: TableFormat = "text"): string {
-  return writeTable(
-    format,
-    COLUMNS,
-    stations.map((station) => COLUMNS.map((column) => (format === "csv" ? column.full : column.shown)(station))),
-  );
+  const write = (columns: readonly StationColumn[]): string =>
+    writeTable(
+      format,
+      columns,
+      stations.map((station) => columns.map((column) => (format === "csv" ? column.full : column.shown)(station))),
+    );
+  let table = write(COLUMNS);
+  for (let spared = 1; format === "text" && spared <= SPARED.length && widest(table) > WIDTH; spared += 1) {
+    table = write(COLUMNS.filter(({ heading }) => !SPARED.slice(0, spared).includes(heading)));
+  }
+  return table;
+}
+
+function widest(text: string): number {
+  return Math.max(...text.split("\n").map((line) => line.length));
 }

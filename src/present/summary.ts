@@ -30,16 +30,23 @@ function refrigeration({ refrigeration: { capacity, loads }, performance }: Cycl
   return ["Refrigeration", `lifts ${each.join("; ")}${share}`];
 }
 
-function liquefaction({ liquefaction: { reached, margin, where, required, given, reason, parameter }, liquid }: CycleResult): Line {
-  const state =
-    margin === null
-      ? "no station lies below the critical pressure"
-      : reached
-        ? `yes: ${liquid === null ? "liquid forms" : `${significant(liquid.massFlow * 1e3, 3)} g/s of liquid, ${percent(liquid.fractionOfFlow)} of the flow,`} behind ${where}`
-        : `no: behind ${where} the gas stays ${fixed(margin / 1e3, 2)} kJ/kg above its dew point`;
-  const subject = given === null ? parameter : `${parameter} (now ${percent(given)})`;
-  const threshold = required === null ? `no efficiency marks the start: ${reason}` : `it begins at ${percent(required, 2)} of ${subject}`;
-  return ["Liquefaction", `${state}; ${threshold}`];
+function liquefaction({ liquefaction: found, liquid }: CycleResult): Line {
+  return ["Liquefaction", `${condition(found, liquid)}; ${threshold(found)}`];
+}
+
+function condition({ reached, margin, where }: CycleResult["liquefaction"], liquid: CycleResult["liquid"]): string {
+  if (margin === null) return "no: no station lies below the critical pressure";
+  if (!reached) return `no: behind ${where}, where it is nearest, the gas stays ${fixed(margin / 1e3, 2)} kJ/kg above its dew point`;
+  const amount = liquid === null ? "" : `, ${significant(liquid.massFlow * 1e3, 3)} g/s of it (${percent(liquid.fractionOfFlow)} of the flow)`;
+  return `yes: liquid forms behind ${where}${amount}`;
+}
+
+function threshold({ required, given, reason, parameter }: CycleResult["liquefaction"]): string {
+  if (required === null) return `no efficiency of the expanders marks where it begins: ${reason}`;
+  const begins = `it begins with ${parameter} at ${percent(required, 2)}`;
+  if (given === null) return begins;
+  const apart = `${fixed(Math.abs(given - required) * 100, 1)} points`;
+  return `${begins}, and the file gives ${percent(given)}: ${given >= required ? `${apart} to spare` : `${apart} short`}`;
 }
 
 function power({ power: bought, performance: { cop, secondLawEfficiency }, massFlow }: CycleResult): Line {
@@ -52,20 +59,21 @@ function power({ power: bought, performance: { cop, secondLawEfficiency }, massF
   return ["Power", figures.join("; ")];
 }
 
-/** The largest destroyers of what is bought, and the tightest exchanger. */
+/** The largest destroyers of what is bought, and the tightest place in each exchanger. */
 function limits({ exergy, blocks }: CycleResult): Line[] {
+  const kinds = new Map(blocks.map(({ name, kind }) => [name, `${kind} ${name}`]));
   const worst = exergy.toSorted((a, b) => b.destroyed - a.destroyed).slice(0, 3);
-  const losses = worst.map(({ block, share }) => `${block} ${percent(share, 0)}`).join(", ");
+  const losses = worst.map(({ block, share }) => `${kinds.get(block) ?? block} ${percent(share, 0)}`).join(", ");
   const pinches = blocks.flatMap(({ name, smallestDifference, smallestDifferenceAt }) =>
     typeof smallestDifference === "number" && typeof smallestDifferenceAt === "number" ? [`${name} ${kelvin(smallestDifference)} ${place(smallestDifferenceAt)}`] : [],
   );
-  const lines: Line[] = [["Most is lost in", `${losses} of all that is bought (table below)`]];
-  if (pinches.length > 0) lines.push(["Closest approach", pinches.join("; ")]);
+  const lines: Line[] = [["Most is lost in", `${losses} of all losses`]];
+  if (pinches.length > 0) lines.push(["Pinch", pinches.join("; ")]);
   return lines;
 }
 
 function place(share: number): string {
   if (share < 0.005) return "at its warm end";
   if (share > 0.995) return "at its cold end";
-  return `inside, where ${percent(share, 0)} of the duty has passed from the warm end`;
+  return `inside, ${percent(share, 0)} of the duty from its warm end`;
 }

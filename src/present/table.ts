@@ -18,7 +18,7 @@ export function textTable(columns: readonly Column[], rows: readonly (readonly s
       .join(GAP)
       .trimEnd();
   const headings = [line(columns.map(({ heading }) => heading))];
-  if (columns.some(({ unit }) => unit !== undefined)) headings.push(line(columns.map(({ unit = "" }) => unit)));
+  if (columns.some(({ unit = "" }) => unit !== "")) headings.push(line(columns.map(({ unit = "" }) => unit)));
   const rule = "-".repeat(widths.reduce((sum, width) => sum + width, GAP.length * (widths.length - 1)));
   return [...headings, rule, ...rows.map(line)].join("\n");
 }
