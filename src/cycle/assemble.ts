@@ -125,8 +125,8 @@ function performanceOf({ blocks, setting }: Network, accounts: Audit, capacity: 
 /** The liquid carried by the wettest station. */
 function liquidOf(stations: readonly Station[]): SteadyState["liquid"] {
   let wettest: SteadyState["liquid"] = null;
-  for (const { phase, vapourFraction, massFlow } of stations) {
-    const fractionOfFlow = phase === "liquid" ? 1 : 1 - (vapourFraction ?? 1);
+  for (const { vapourFraction, massFlow } of stations) {
+    const fractionOfFlow = 1 - (vapourFraction ?? 1);
     if (fractionOfFlow > (wettest?.fractionOfFlow ?? 0)) {
       wettest = { massFlow: massFlow * fractionOfFlow, fractionOfFlow, oxygenMoleFraction: null };
     }

@@ -35,6 +35,10 @@ export class Pass {
     }
   }
 
+  get fluid(): Network["setting"]["fluid"] {
+    return this.network.setting.fluid;
+  }
+
   get failedAt(): string | null {
     return this.at === "" ? null : this.at;
   }

@@ -1,10 +1,10 @@
 import { bracketedRoot } from "../fluids/root.js";
 import { OutOfRangeError } from "../fluids/errors.js";
 import { State } from "../fluids/state.js";
-import { NoSteadyState } from "./failure.js";
 import { solveLinear } from "./linear.js";
 import type { Network } from "./network.js";
 import { Pass } from "./pass.js";
+import { outOfRange, tooWarm, unsettled } from "./reasons.js";
 
 /** How the steady state was reached. */
 export interface Settled {
@@ -47,12 +47,16 @@ export function settle(network: Network, lookColder: boolean): Settled {
   }
   guarded(pass, () => pass.run(start, change));
   const capacity = heatCapacity(network);
-  if (change.some((value) => value > SETTLED * capacity)) throw tooWarm(network, change);
+  // With several tears one may warm at first all the same: a leak into a stream that nothing cools yet.
+  if (change.every((value) => value > SETTLED * capacity)) throw tooWarm(network, change);
   for (let attempt = 1; ; attempt++) {
     const x = size === 1 ? coolOneTear(pass, start, change, capacity) : coolTears(pass, start, change, capacity);
     const otherSteadyStates = lookColder && hasColder(network, pass, x, capacity);
     guarded(pass, () => pass.run(x, change));
-    if (largest(change) <= SETTLED_AGAIN * SETTLED * capacity) return { iterations: pass.count, otherSteadyStates };
+    if (largest(change) <= SETTLED_AGAIN * SETTLED * capacity) {
+      if (x.every((value, i) => value > start[i])) throw tooWarm(network, x.map((value, i) => value - start[i]));
+      return { iterations: pass.count, otherSteadyStates };
+    }
     // An exchanger has found on the way that it must be summed in finer pieces, and keeps to that from now on.
     if (attempt === MOST_ATTEMPTS) throw unsettled(pass, largest(change) / capacity);
     guarded(pass, () => pass.run(start, change));
@@ -246,45 +250,4 @@ function guarded(pass: Pass, run: () => void): void {
     if (error instanceof OutOfRangeError) throw outOfRange(pass, error);
     throw error;
   }
-}
-
-function outOfRange(pass: Pass, error: OutOfRangeError): NoSteadyState {
-  return new NoSteadyState(
-    pass.failedAt,
-    error.quantity,
-    `the gas would leave the range of the equation: ${error.message}.`,
-    "Give the machine more heat to lift, a smaller pressure ratio or a poorer recuperator.",
-  );
-}
-
-function unsettled(pass: Pass, kelvin: number): NoSteadyState {
-  return new NoSteadyState(
-    null,
-    "balance",
-    `no steady state was found in ${pass.count} passes; the nearest still drifted by ${kelvin.toPrecision(2)} K a pass.`,
-    "Change a pressure or an efficiency a little and run again.",
-  );
-}
-
-/** The loads, leaks and losses exceed what the machine lifts even with its cold end at the surroundings' temperature. */
-function tooWarm({ tears, blocks, setting }: Network, change: Float64Array): NoSteadyState {
-  const { temperature } = setting.surroundings;
-  let asked = 0;
-  let largestLoad: string | null = null;
-  let heaviest = 0;
-  for (const { unit, ports } of blocks) {
-    const heat = unit.refrigeration === undefined ? 0 : unit.refrigeration().heat;
-    asked += heat;
-    if (heat > heaviest) [heaviest, largestLoad] = [heat, ports[0]?.entry.name ?? null];
-  }
-  const excess = Math.max(...change.map((value, i) => value * (tears[i]?.massFlow ?? 0)));
-  const lifts = Math.max(0, asked - excess);
-  return new NoSteadyState(
-    largestLoad,
-    "heat",
-    asked > 0
-      ? `the loads ask for ${asked.toPrecision(4)} W, but even with its cold end as warm as the surroundings (${temperature.toFixed(2)} K) the machine lifts about ${lifts.toPrecision(3)} W.`
-      : `heat comes in faster than the machine lifts it even with its cold end as warm as the surroundings (${temperature.toFixed(2)} K).`,
-    "Lower the load or the leaks, or raise the flow, the pressure ratio or the expander's efficiency.",
-  );
 }

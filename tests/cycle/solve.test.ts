@@ -47,15 +47,15 @@ describe("the low-pressure limit", () => {
   };
 
   it.each([
-    { pi: 4, eta: 0.7, eps: 0.95, load: 0 },
-    { pi: 4, eta: 0.7, eps: 0.9, load: 20 },
-    { pi: 2, eta: 0.5, eps: 0.98, load: 5 },
+    { pi: 3, eta: 0.4, eps: 0.8, load: 0 },
+    { pi: 4, eta: 0.5, eps: 0.9, load: 60 },
+    { pi: 2, eta: 0.5, eps: 0.95, load: 30 },
     { pi: 8, eta: 0.3, eps: 0.5, load: 0 },
   ])("is met by argon, whose heat capacity is constant: $pi, $eta, $eps, $load K", ({ pi, eta, eps, load }) => {
     const gasConstant = 8.31451 / 0.039948;
     const lowPressure = 1;
     const expected = closedForm(300, pi, eta, eps, load, 5 / 3);
-    if (expected < 84) return;
+    expect(expected).toBeGreaterThan(100);
     const definition = singleExpander({
       fluid: "argon",
       flow: 0.01,
