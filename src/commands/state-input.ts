@@ -75,8 +75,10 @@ function valueOf(text: string): { name: string; value: number } | LocatedProblem
   const [, symbol, written = text] = NAMED.exec(text) ?? [];
   const named = symbol === undefined ? undefined : propertyCalled(symbol);
   if (symbol !== undefined && named === undefined) {
-    const known = PROPERTIES.flatMap((property) => [property.symbol, property.words]);
-    return problem(text, `the unknown property "${symbol}"`, PROPERTIES.map((property) => property.symbol).join(", "), nearest(symbol, known));
+    const expected = PROPERTIES.map((property) => `${property.symbol} (${property.words})`).join(", ");
+    // Any letter is near to any other: only a word is worth a guess.
+    const near = symbol.length > 2 ? nearest(symbol, PROPERTIES.map((property) => property.words)) : undefined;
+    return problem(text, `the unknown property "${symbol}"`, expected, near);
   }
   const quantity = plainQuantity(written, ATMOSPHERE);
   if (quantity === "not plain") return problem(text, "no number with a unit", "a value such as '100 K', '5 bar' or 'h=200 kJ/kg'");

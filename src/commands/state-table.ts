@@ -12,10 +12,8 @@ export interface StateRow {
   /** Where it stands in the file. */
   readonly line: number;
   readonly state?: FluidState;
-  /** Why the row has no state. */
-  readonly status?: string;
-  /** The row as such is wrong: its place, what stands there, what should. */
-  readonly problem?: LocatedProblem;
+  /** "ok", or why the row has no state. */
+  readonly status: string;
 }
 
 /** A row of cells and the line of the file on which it stands. */
@@ -50,19 +48,19 @@ export async function readStates(path: string, gas: Fluid): Promise<StateRow[]> 
   if (problems.length > 0) throw new InputError(problems);
   const pair = chosen(columns);
   if (pair === undefined) {
-    throw new InputError([at(heading.line, `the heading "${heading.cells.join(",")}"`, "two columns that fix a state, such as temperature_K,pressure_bar")]);
+    throw new InputError([at(heading.line, `the heading ${quoted(heading.cells.join(","))}`, "two columns that fix a state, such as temperature_K,pressure_bar")]);
   }
   return body.map(({ cells, line }): StateRow => {
     const given: Record<string, number> = {};
     for (const { property, index, unit } of pair) {
       const cell = cells[index] ?? "";
       if (cell === "" || !Number.isFinite(Number(cell))) {
-        return { line, status: "malformed", problem: at(line, cell === "" ? `no value for ${property}` : `"${cell}"`, `a number for ${property}`) };
+        return { line, status: `${cell === "" ? "no value" : quoted(cell)}; expected a number for ${property}` };
       }
       given[property] = toSI(Number(cell), unit, ATMOSPHERE);
     }
     try {
-      return { line, state: gas.at(given as unknown as StateInput) };
+      return { line, state: gas.at(given as unknown as StateInput), status: "ok" };
     } catch (error) {
       if (!(error instanceof FluidError)) throw error;
       return { line, status: error.message };
@@ -75,7 +73,7 @@ async function readRows(path: string): Promise<Row[]> {
     throw new InputError([{ code: "state-table", place: path, line: 0, column: 0, found, expected }]);
   };
   try {
-    const text = await readFile(path, "utf8");
+    const text = new TextDecoder("utf-8", { fatal: true }).decode(await readFile(path));
     const options = { skip_empty_lines: true, trim: true, relax_column_count: true, bom: true, info: true };
     const rows = parse(text, options) as unknown as { record: string[]; info: { lines: number } }[];
     return rows.map(({ record, info }) => ({ cells: record, line: info.lines }));
@@ -83,8 +81,14 @@ async function readRows(path: string): Promise<Row[]> {
     const { code, message } = error as NodeJS.ErrnoException;
     if (code === "ENOENT") return refuse("no such file", "a CSV file");
     if (code === "EISDIR") return refuse("a directory", "a CSV file");
-    return refuse(`a table that cannot be read (${message.split("\n")[0]})`, "comma-separated values");
+    if (error instanceof TypeError) return refuse("bytes that are no text", "a CSV file in UTF-8");
+    return refuse(`a table that cannot be read (${message.split(", value")[0]})`, "comma-separated values");
   }
+}
+
+/** A piece of the file as a message may show it: short, and with no control character that a terminal would obey. */
+function quoted(text: string): string {
+  return JSON.stringify(text.length > 60 ? `${text.slice(0, 60)}…` : text);
 }
 
 /** What a column's heading says; null where it names no property. */
@@ -96,10 +100,10 @@ function headed(text: string, index: number): HeadedColumn | { found: string; ex
   const name = form?.[2];
   if (property.kind === "fraction") return { property: property.name, index, unit: name === "%" ? units["%"] : { kind: "fraction", factor: 1 } };
   const known = unitNames([property.kind]);
-  if (name === undefined) return { found: `the heading "${text}" without a unit`, expected: `${text}_${known[0]} or another of ${known.join(", ")}` };
+  if (name === undefined) return { found: `the heading ${quoted(text)} without a unit`, expected: `${text}_${known[0]} or another of ${known.join(", ")}` };
   if (known.includes(name)) return { property: property.name, index, unit: units[name] };
   const near = nearest(name, known);
-  return { found: `the unit "${name}" for ${property.words}`, expected: `one of ${known.join(", ")}${near === undefined ? "" : `; did you mean "${near}"?`}` };
+  return { found: `the unit ${quoted(name)} for ${property.words}`, expected: `one of ${known.join(", ")}${near === undefined ? "" : `; did you mean "${near}"?`}` };
 }
 
 function chosen(columns: readonly HeadedColumn[]): HeadedColumn[] | undefined {

@@ -32,19 +32,17 @@ export const state: Command = {
         return WRONG_INPUT;
       }
       const { readStates } = await import("./state-table.js");
-      const { InputError } = await import("../cyclefile/errors.js");
       const rows = await readStates(from, gas);
-      const shown = rows.map(({ problem, ...row }) => (problem === undefined ? row : { ...row, status: `${problem.found}; expected ${problem.expected}` }));
-      terminal.write(format === "json" ? JSON.stringify(shown, null, 2) : stateList(shown, format as TableFormat));
-      const problems = rows.flatMap(({ problem }) => problem ?? []);
-      if (problems.length > 0) throw new InputError(problems);
-      return rows.some(({ state: at }) => at === undefined) ? WRONG_INPUT : ANSWERED;
+      terminal.write(format === "json" ? JSON.stringify(rows, null, 2) : stateList(rows, format as TableFormat));
+      const without = rows.filter(({ state: at }) => at === undefined);
+      for (const { line, status } of without) terminal.tell(`${from}:${line}: ${status}`);
+      return without.length > 0 ? WRONG_INPUT : ANSWERED;
     }
     const { stateInput } = await import("./state-input.js");
     const at = gas.at(stateInput([first, second]));
     if (format === "json") terminal.write(JSON.stringify(at, null, 2));
     else if (format === "text") terminal.write(stateSheet(name, at));
-    else terminal.write(stateList([{ line: 1, state: at }], format as TableFormat));
+    else terminal.write(stateList([{ line: 1, state: at, status: "ok" }], format as TableFormat));
     return ANSWERED;
   },
 };

@@ -61,9 +61,7 @@ function warningLines({ solver, warnings }: CycleResult): string {
   return lines.join("\n");
 }
 
-function audited({ solver, audit }: CycleResult): string {
-  const part = (value: number): string => value.toExponential(0);
-  return wrap(
-    `Audit: the first law closes to ${part(audit.energy)}, the second to ${part(audit.exergy)}, the worst block to ${part(solver.residual)} of the largest flow; ${solver.iterations} passes.`,
-  );
+function audited({ solver: { residual, iterations }, audit: { energy, exergy } }: CycleResult): string {
+  const [first, second, worst] = [energy, exergy, residual].map((part) => part.toExponential(0));
+  return `Audit: first law closes to ${first}, second law to ${second}, worst block to ${worst}; ${iterations} passes.`;
 }

@@ -1,7 +1,6 @@
 import type { FluidState } from "../fluids/fluid.js";
 import { fixed, fullDigits, significant } from "./numbers.js";
 import { writeTable, type Column, type TableFormat } from "./table.js";
-import { wrap } from "./wrap.js";
 
 /** A property of a state: its heading, unit and digits. */
 interface Property extends Column {
@@ -39,35 +38,29 @@ function phaseWords({ phase }: FluidState): string {
   return phase === "two-phase" ? "between bubble and dew" : "above the critical pressure";
 }
 
-/** A state of a table, or why it has none. */
+/** A row of a table of states. */
 export interface ListedState {
   /** Line of the file that it was read from. */
   readonly line: number;
   readonly state?: FluidState;
-  readonly status?: string;
+  /** "ok", or why it has none. */
+  readonly status: string;
 }
 
 /** What a terminal's width has no room for in a list. */
 const ONLY_ELSEWHERE = new Set(["u", "cv"]);
 
-/** Many states, one a row. A row without a state says why: in its last column, or in text below the table. */
+/** Many states, one a row; outside text the last column says why a row has none. */
 export function stateList(rows: readonly ListedState[], format: TableFormat): string {
   const isText = format === "text";
   const properties = PROPERTIES.filter(({ heading }) => !isText || !ONLY_ELSEWHERE.has(heading));
-  const none = format === "csv" ? "" : "-";
   const cell = ({ value, show }: Property, state: FluidState | undefined): string => {
     const found = state === undefined ? null : value(state);
-    if (found === null) return none;
+    if (found === null) return format === "csv" ? "" : "-";
     if (typeof found === "string") return found;
     return format === "csv" ? fullDigits(found) : show(found);
   };
-  const line: Column = { heading: "line" };
-  const status: Column = { heading: "status", align: "left" };
-  const columns = isText ? [line, ...properties] : [line, ...properties, status];
-  const cells = rows.map((row) => {
-    const shown = [String(row.line), ...properties.map((property) => cell(property, row.state))];
-    return isText ? shown : [...shown, row.status ?? "ok"];
-  });
-  const without = isText ? rows.filter(({ status: reason }) => reason !== undefined) : [];
-  return [writeTable(format, columns, cells), ...without.map((row) => wrap(`line ${row.line}: ${row.status}`))].join("\n");
+  const columns: Column[] = [{ heading: "line" }, ...properties, ...(isText ? [] : [{ heading: "status", align: "left" } as const])];
+  const cells = rows.map(({ line, state, status }) => [String(line), ...properties.map((property) => cell(property, state)), ...(isText ? [] : [status])]);
+  return writeTable(format, columns, cells);
 }

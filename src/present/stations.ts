@@ -42,11 +42,10 @@ export function stationTable(stations: readonly Station[], format: TableFormat =
       columns,
       stations.map((station) => columns.map((column) => (format === "csv" ? column.full : column.shown)(station))),
     );
-  let table = write(COLUMNS);
-  for (let spared = 1; format === "text" && spared <= SPARED.length && widest(table) > WIDTH; spared += 1) {
-    table = write(COLUMNS.filter(({ heading }) => !SPARED.slice(0, spared).includes(heading)));
-  }
-  return table;
+  const table = write(COLUMNS);
+  if (format !== "text" || widest(table) <= WIDTH) return table;
+  const narrower = SPARED.map((_, i) => write(COLUMNS.filter(({ heading }) => !SPARED.slice(0, i + 1).includes(heading))));
+  return narrower.find((each) => widest(each) <= WIDTH) ?? narrower[narrower.length - 1];
 }
 
 function widest(text: string): number {
