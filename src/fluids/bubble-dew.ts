@@ -74,7 +74,7 @@ export class BubbleDewBoundary implements PhaseBoundary {
     const liquidEntropy = equation.entropy;
     const liquidHeatCapacity = equation.isobaricHeatCapacity();
     const dewTemperature = this.dew.temperature(pressure);
-    const vapourDensity = search.gas(dewTemperature, pressure);
+    const vapourDensity = search.gas(dewTemperature, pressure, this.vapourDensityGuess(dewTemperature));
     equation.setState(vapourDensity);
     return {
       pressure,
@@ -100,7 +100,7 @@ export class BubbleDewBoundary implements PhaseBoundary {
   pressureInside(temperature: number, density: number): number {
     const { equation, search, criticalPressure, lowestPressure } = this;
     const dewPressure = this.dew.pressure(temperature);
-    if (density <= search.gas(temperature, dewPressure)) return NaN;
+    if (density <= search.gas(temperature, dewPressure, this.vapourDensityGuess(temperature))) return NaN;
     let bubblePressure = this.bubble.pressure(temperature);
     if (temperature <= this.bubble.highest) {
       if (density >= search.liquid(temperature, bubblePressure, this.liquidDensityGuess(temperature))) return NaN;

@@ -132,7 +132,7 @@ export class CaloricSearch {
     if (temperature >= this.boundary.criticalTemperature) return this.search.above(temperature, pressure);
     return side === LIQUID_SIDE
       ? this.search.liquid(temperature, pressure, this.boundary.liquidDensityGuess(temperature))
-      : this.search.gas(temperature, pressure);
+      : this.search.gas(temperature, pressure, this.boundary.vapourDensityGuess(temperature));
   }
 
   /** K by which temperature has to change at constant pressure, by first order. Sets the equation's state. */

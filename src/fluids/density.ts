@@ -15,6 +15,11 @@ const SAFE_STEPS = 200;
 const DENSEST = 6;
 /** Largest relative change of density in one fast step. */
 const LONGEST_STEP = 0.3;
+/**
+ * Share by which a guessed saturated density may err. A density farther beyond it than that is a root inside the two-phase
+ * region, where equations of state have loops of their own.
+ */
+export const SATURATION_MARGIN = 0.05;
 /** Ideal-gas density over the critical one below which two virial coefficients give a better start than a cubic equation. */
 const THIN = 0.25;
 /** Pressure derivative of the bulk modulus of simple liquids: makes the first step in a liquid nearly exact. */
@@ -39,22 +44,21 @@ export class DensitySearch {
     this.cubic = new CubicGuess(temperature, pressure, equation.specificGasConstant, data.phases.guess.acentricFactor);
   }
 
-  /** The least dense root: gas. */
-  gas(temperature: number, pressure: number): number {
+  /** The least dense root: gas, no denser than roughly the saturated vapour (kg/m3) at that temperature. */
+  gas(temperature: number, pressure: number, saturated: number): number {
     const { equation } = this;
     equation.setTemperature(temperature);
-    const guess = this.virialGuess(temperature, pressure);
-    const density = this.refine(pressure, guess);
-    if (density < this.criticalDensity) return density;
+    const density = this.refine(pressure, this.virialGuess(temperature, pressure));
+    if (density <= (1 + SATURATION_MARGIN) * saturated) return density;
     return this.outermost(temperature, pressure, -1);
   }
 
-  /** The densest root: liquid, starting from roughly the saturated liquid's density (kg/m3) at that temperature. */
+  /** The densest root: liquid, no thinner than roughly the saturated liquid (kg/m3) at that temperature. */
   liquid(temperature: number, pressure: number, saturated: number): number {
     const { equation } = this;
     equation.setTemperature(temperature);
     const density = this.refine(pressure, this.compressed(pressure, saturated));
-    if (density > 0.99 * this.criticalDensity && density > 0.5 * saturated) return density;
+    if (density >= (1 - SATURATION_MARGIN) * saturated) return density;
     return this.outermost(temperature, pressure, 1);
   }
 

@@ -1,6 +1,6 @@
 import { BubbleDewBoundary } from "./bubble-dew.js";
 import { CaloricSearch } from "./caloric.js";
-import { DensitySearch } from "./density.js";
+import { DensitySearch, SATURATION_MARGIN } from "./density.js";
 import { OutOfRangeError } from "./errors.js";
 import type { FluidData } from "./fluid-data.js";
 import { HelmholtzEquation } from "./helmholtz.js";
@@ -14,8 +14,6 @@ import { writeSinglePhase, writeTwoPhase } from "./write.js";
 
 /** Pa, at which saturated liquid has zero enthalpy and entropy. */
 const ZERO_PRESSURE = 101325;
-/** Share by which a density may lie beyond the guessed saturated one and still be of the phase on that side. */
-const DENSITY_MARGIN = 0.25;
 /** Relative change of pressure or temperature up to which an old state starts a search better than a guess. */
 const NEAR = 0.1;
 /** Share of a limiting temperature that a search may end beyond it, by round-off. */
@@ -168,10 +166,10 @@ export class Flash {
     if (pressure > this.melting.free && pressure > this.melting.pressure(temperature) * (1 + MELTING_ROUND_OFF)) return false;
     if (temperature >= boundary.criticalTemperature) return side === GAS_SIDE || pressure >= boundary.criticalPressure;
     if (side === GAS_SIDE) {
-      if (density > (1 + DENSITY_MARGIN) * boundary.vapourDensityGuess(temperature)) return false;
+      if (density > (1 + SATURATION_MARGIN) * boundary.vapourDensityGuess(temperature)) return false;
       if (saturation !== undefined) return temperature >= saturation.dewTemperature * (1 - ROUND_OFF);
     } else {
-      if (density < (1 - DENSITY_MARGIN) * boundary.liquidDensityGuess(temperature)) return false;
+      if (density < (1 - SATURATION_MARGIN) * boundary.liquidDensityGuess(temperature)) return false;
       if (saturation !== undefined) return temperature <= saturation.bubbleTemperature * (1 + ROUND_OFF);
     }
     return boundary.side(temperature, pressure) === side;

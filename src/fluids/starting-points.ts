@@ -17,7 +17,7 @@ const SATURATION_POINTS = 8;
 const THIN = 1e-9;
 /** Highest temperature of the saturation guesses over the critical one: nearer, the curves turn too sharply for a polynomial. */
 const NEARLY_CRITICAL = 0.985;
-/** The same for compressed liquid. */
+/** The same above the critical pressure. */
 const LIQUID_LIMIT = 0.93;
 /** Share of the heat of vaporisation by which a guess of a saturated value may err. */
 const GUESS_MARGIN = 0.03;
@@ -29,6 +29,8 @@ const LIQUID_EXPANSION = 0.5;
 const VAPOUR_PRESSURE_SLOPE = 5.4;
 /** Departure of dense fluid from the ideal gas, in units of R Tc or R, beyond any in range. */
 const LARGEST_DEPARTURE = 6;
+/** Lowest temperature over the critical one at which the cubic equation is asked. */
+const DENSE_LIMIT = 0.7;
 /** Steps that bring the dense start within the cubic equation's own error. */
 const DENSE_STEPS = 5;
 
@@ -59,6 +61,7 @@ export class StartingPoints {
 
   private readonly guesses: readonly [enthalpy: Guesses, entropy: Guesses];
   private readonly cubic: CubicGuess;
+  private readonly lowest: number;
   private readonly specificGasConstant: number;
 
   constructor(
@@ -69,6 +72,7 @@ export class StartingPoints {
   ) {
     const { criticalTemperature } = boundary;
     const { minimumTemperature, maximumTemperature } = range;
+    this.lowest = minimumTemperature;
     this.specificGasConstant = equation.specificGasConstant;
     this.cubic = search.cubic;
     const hot = chebyshevNodes(minimumTemperature, maximumTemperature, IDEAL_POINTS);
@@ -120,35 +124,35 @@ export class StartingPoints {
 
   /** Leaves temperature and density from which to search for the state of a phase, the liquid side above the critical pressure. */
   place(kind: Caloric, pressure: number, value: number, side: Side): void {
-    const { boundary, equation, search } = this;
+    const { boundary, equation, search, lowest } = this;
+    const { criticalTemperature } = boundary;
     const dense = pressure >= boundary.criticalPressure;
-    if (side === LIQUID_SIDE && this.placeLiquid(kind, pressure, value, dense)) return;
-    const gas = this.gasTemperature(kind, pressure, value);
-    const temperature = dense ? this.denseTemperature(kind, pressure, value, gas) : gas;
+    let temperature = side === LIQUID_SIDE ? this.liquidTemperature(kind, pressure, value) : this.gasTemperature(kind, pressure, value);
+    if (dense && !(temperature > lowest && temperature < LIQUID_LIMIT * criticalTemperature)) {
+      temperature = this.denseTemperature(kind, pressure, value);
+    }
     equation.setTemperature(temperature);
     this.temperature = temperature;
-    this.density =
-      dense || temperature >= boundary.criticalTemperature
-        ? search.aboveGuess(temperature, pressure)
-        : search.virialGuess(temperature, pressure);
+    if (side === LIQUID_SIDE && temperature < NEARLY_CRITICAL * criticalTemperature) {
+      this.density = search.compressed(pressure, boundary.liquidDensityGuess(temperature));
+    } else if (dense || temperature >= criticalTemperature) {
+      this.density = search.aboveGuess(temperature, pressure);
+    } else {
+      this.density = search.virialGuess(temperature, pressure);
+    }
   }
 
-  /** False where the value is not surely that of a liquid. */
-  private placeLiquid(kind: Caloric, pressure: number, value: number, dense: boolean): boolean {
-    const { boundary, equation, search } = this;
+  /** K, of liquid; NaN above the critical pressure where the value is too high for one. */
+  private liquidTemperature(kind: Caloric, pressure: number, value: number): number {
+    const { boundary } = this;
     const { criticalTemperature, criticalPressure } = boundary;
     const { liquid, liquidEnd } = this.guesses[kind];
-    if (dense && value > liquidEnd) return false;
+    if (pressure >= criticalPressure && value > liquidEnd) return NaN;
     const first = liquid.at(value);
     // The same temperature at saturation: h less (1 - expansion) v dp, s more expansion v dp / T
     const vapourPressure = criticalPressure * Math.exp(VAPOUR_PRESSURE_SLOPE * (1 - criticalTemperature / first));
     const work = (pressure - vapourPressure) / boundary.liquidDensityGuess(first);
-    const saturated = kind === ENTHALPY ? value - (1 - LIQUID_EXPANSION) * work : value + (LIQUID_EXPANSION * work) / first;
-    const temperature = dense ? Math.min(liquid.at(saturated), NEARLY_CRITICAL * criticalTemperature) : liquid.at(saturated);
-    equation.setTemperature(temperature);
-    this.temperature = temperature;
-    this.density = search.compressed(pressure, boundary.liquidDensityGuess(temperature));
-    return true;
+    return liquid.at(kind === ENTHALPY ? value - (1 - LIQUID_EXPANSION) * work : value + (LIQUID_EXPANSION * work) / first);
   }
 
   /** K, of a gas, its departure from the ideal gas by the second virial coefficient. */
@@ -169,21 +173,22 @@ export class StartingPoints {
     return Math.exp(ideal.at(sum - departure * this.specificGasConstant));
   }
 
-  /** K, of dense fluid, by the cubic equation: regula falsi (Illinois) around `first`. */
-  private denseTemperature(kind: Caloric, pressure: number, value: number, first: number): number {
+  /** K, of dense fluid, by the cubic equation: regula falsi (Illinois) around the ideal gas's temperature. */
+  private denseTemperature(kind: Caloric, pressure: number, value: number): number {
     const { criticalTemperature } = this.boundary;
     const { ideal } = this.guesses[kind];
     const { specificGasConstant } = this;
-    let low = LIQUID_LIMIT * criticalTemperature;
+    let low = Math.max(this.lowest, DENSE_LIMIT * criticalTemperature);
     let atLow = this.denseMiss(kind, pressure, value, low);
-    if (atLow < 0) return low;
+    if (!(atLow > 0)) return low;
     const most = LARGEST_DEPARTURE * specificGasConstant;
     let high =
       kind === ENTHALPY
         ? ideal.at(value + most * criticalTemperature)
         : Math.exp(ideal.at(value + specificGasConstant * Math.log(pressure) + most));
+    high = Math.max(high, 2 * low);
     let atHigh = this.denseMiss(kind, pressure, value, high);
-    let temperature = Math.max(low, Math.min(high, first));
+    let temperature = Math.max(low, Math.min(high, this.gasTemperature(kind, pressure, value)));
     let side = 0;
     for (let i = 0; i < DENSE_STEPS; i++) {
       const miss = this.denseMiss(kind, pressure, value, temperature);

@@ -1,33 +1,25 @@
+import { Coexistence } from "./coexistence.js";
 import { PressureCurve } from "./curve.js";
+import { SATURATION_MARGIN } from "./density.js";
 import { NoConvergenceError } from "./errors.js";
 import type { FluidData, VapourPressureCurve } from "./fluid-data.js";
 import type { HelmholtzEquation } from "./helmholtz.js";
 import { polynomial } from "./polynomial.js";
 import { GAS_SIDE, LIQUID_SIDE, type PhaseBoundary, type Saturation, type Side } from "./saturation.js";
 
-/** Relative step of densities and temperature after which the next one is below round-off, Newton's steps squaring themselves. */
-const LAST_STEP = 1e-9;
-/** Round-off of a difference of Helmholtz energies, over R T. */
-const ROUND_OFF = 1e-15;
-/** Steps of a search; it takes 3 to 6, near the critical point some tens until round-off lets it settle. */
-const MOST_STEPS = 200;
-/** Share by which a guessed density that lies inside the unstable region is moved out of it at a time. */
-const OUTWARD = 0.02;
 /** Share of the critical pressure from which temperature is approached step by step. */
 const NEARLY_CRITICAL = 0.97;
 /** Relative step of temperature there after which the next one is below round-off. */
 const LAST_APPROACH = 1e-8;
-/** Largest relative change of temperature in one step. */
-const LONGEST_STEP = 0.05;
-/** Share by which the guessed saturated densities may err. */
-const DENSITY_MARGIN = 0.05;
+/** Steps of that approach; it takes 2 to 4. */
+const MOST_STEPS = 50;
 /**
  * Share of the critical temperature below it within which the two densities are too near for round-off, which then moves
  * them by more than 1e-9: there they follow from the equation's expansion about its critical point,
  * (rho_l - rho_v) / 2 = x (b + c x^2) and (rho_l + rho_v) / 2 = rho_c + d x^2 with x^2 = 1 - T / T_c,
  * whose coefficients come from this distance and `FURTHER` times it, and whose next terms are below 1e-7 of density.
  */
-const NEAR_CRITICAL = 1e-6;
+const NEAR_CRITICAL = 1e-7;
 const FURTHER = 4;
 
 /** The expansion of both densities about the critical point. */
@@ -52,12 +44,9 @@ export class VapourPressureBoundary implements PhaseBoundary {
   private readonly curve: PressureCurve;
   private expansion: Expansion | undefined;
 
-  // The coexisting phases at `temperature`, after `coexist`.
+  /** The coexisting phases at `temperature`. */
+  private readonly phases: Coexistence;
   private temperature = NaN;
-  private pressure = NaN;
-  private pressureByTemperature = NaN;
-  private liquidDensity = NaN;
-  private vapourDensity = NaN;
 
   constructor(
     data: FluidData,
@@ -70,14 +59,14 @@ export class VapourPressureBoundary implements PhaseBoundary {
     this.criticalDensity = guesses.criticalDensity * data.molarMass;
     this.lowest = data.range.minimumTemperature;
     this.curve = new PressureCurve(guesses.pressureGuess, this.criticalTemperature, this.criticalPressure, this.lowest, this.criticalTemperature);
-    this.coexist(this.lowest);
-    this.lowestPressure = this.pressure;
+    this.phases = new Coexistence(data.name, equation, this.criticalDensity);
+    this.lowestPressure = this.bubblePressure(this.lowest);
   }
 
   bubblePressure(temperature: number): number {
     if (temperature > this.criticalTemperature) return NaN;
     this.coexist(temperature);
-    return this.pressure;
+    return this.phases.pressure;
   }
 
   dewPressure(temperature: number): number {
@@ -91,7 +80,7 @@ export class VapourPressureBoundary implements PhaseBoundary {
     if (ratio > 1 + guessTolerance) return LIQUID_SIDE;
     if (ratio < 1 - guessTolerance) return GAS_SIDE;
     this.coexist(temperature);
-    return pressure >= this.pressure ? LIQUID_SIDE : GAS_SIDE;
+    return pressure >= this.phases.pressure ? LIQUID_SIDE : GAS_SIDE;
   }
 
   lowestGasTemperature(): number {
@@ -99,16 +88,17 @@ export class VapourPressureBoundary implements PhaseBoundary {
   }
 
   pressureInside(temperature: number, density: number): number {
-    if (density > (1 + DENSITY_MARGIN) * this.liquidDensityGuess(temperature)) return NaN;
-    if (density < (1 - DENSITY_MARGIN) * this.vapourDensityGuess(temperature)) return NaN;
+    if (density > (1 + SATURATION_MARGIN) * this.liquidDensityGuess(temperature)) return NaN;
+    if (density < (1 - SATURATION_MARGIN) * this.vapourDensityGuess(temperature)) return NaN;
     this.coexist(temperature);
-    return density > this.vapourDensity && density < this.liquidDensity ? this.pressure : NaN;
+    const { liquidDensity, vapourDensity, pressure } = this.phases;
+    return density > vapourDensity && density < liquidDensity ? pressure : NaN;
   }
 
   solve(pressure: number): Saturation {
     const { equation } = this;
     const temperature = this.boil(pressure);
-    const { liquidDensity, vapourDensity } = this;
+    const { liquidDensity, vapourDensity } = this.phases;
     equation.setTemperature(temperature);
     equation.setState(liquidDensity);
     const liquidEnthalpy = equation.enthalpy;
@@ -178,7 +168,7 @@ export class VapourPressureBoundary implements PhaseBoundary {
     let temperature = Math.min(highest, this.curve.temperature(pressure));
     for (let i = 0; i < MOST_STEPS; i++) {
       this.settle(temperature, NaN);
-      const step = (pressure - this.pressure) / this.pressureByTemperature;
+      const step = (pressure - this.phases.pressure) / this.phases.pressureByTemperature;
       temperature = Math.min(highest, temperature + step);
       if (Math.abs(step) > LAST_APPROACH * temperature) continue;
       this.settle(temperature, NaN);
@@ -187,106 +177,42 @@ export class VapourPressureBoundary implements PhaseBoundary {
     throw new NoConvergenceError(this.name, `saturation at ${pressure} Pa`);
   }
 
-  /**
-   * Newton's method in both densities and, where a pressure (Pa) is given, in temperature as well. Equal chemical
-   * potential at pressure p means equal areas: a_l - a_v = p (1 / rho_v - 1 / rho_l), a the Helmholtz energy.
-   */
-  private settle(firstTemperature: number, pressure: number): number {
-    const { equation, criticalDensity } = this;
-    const { residual, specificGasConstant, reducingDensity } = equation;
-    let temperature = firstTemperature;
-    let liquid = this.liquidDensityGuess(temperature);
-    // Near the critical point the two lie evenly about its density, and a guess farther out than that is still safe.
-    let vapour = Math.min(this.vapourDensityGuess(temperature), Math.max(2 * criticalDensity - liquid, 0.5 * criticalDensity));
-    equation.setTemperature(temperature);
-    liquid = this.outside(liquid, OUTWARD);
-    vapour = this.outside(vapour, -OUTWARD);
-    for (let i = 0; i < MOST_STEPS; i++) {
-      equation.setTemperature(temperature);
-      const scale = specificGasConstant * temperature;
-      residual.setDeltaFully(liquid / reducingDensity);
-      const liquidEnergy = Math.log(liquid / criticalDensity) + residual.value;
-      const liquidEntropy = residual.tau1 - liquidEnergy;
-      const liquidPressure = liquid * scale * (1 + residual.delta1);
-      const liquidSlope = scale * (1 + 2 * residual.delta1 + residual.delta2);
-      const liquidWarming = liquid * specificGasConstant * (1 + residual.delta1 - residual.tau1delta1);
-      residual.setDeltaFully(vapour / reducingDensity);
-      const vapourEnergy = Math.log(vapour / criticalDensity) + residual.value;
-      const vapourEntropy = residual.tau1 - vapourEnergy;
-      const vapourPressure = vapour * scale * (1 + residual.delta1);
-      const vapourSlope = scale * (1 + 2 * residual.delta1 + residual.delta2);
-      const vapourWarming = vapour * specificGasConstant * (1 + residual.delta1 - residual.tau1delta1);
-      if (!(liquidSlope > 0 && vapourSlope > 0)) break;
-      const volume = 1 / vapour - 1 / liquid;
-      const equalArea = (scale * (liquidEnergy - vapourEnergy)) / volume;
-      const target = Number.isNaN(pressure) ? equalArea : pressure;
-      let warmer = ((target - equalArea) * volume) / (specificGasConstant * (vapourEntropy - liquidEntropy));
-      warmer = Math.max(-LONGEST_STEP * temperature, Math.min(LONGEST_STEP * temperature, warmer));
-      const denser = (target - liquidPressure - liquidWarming * warmer) / liquidSlope;
-      const thinner = (target - vapourPressure - vapourWarming * warmer) / vapourSlope;
-      temperature += warmer;
-      liquid += Math.max(-0.5 * liquid, Math.min(liquid, denser));
-      vapour += Math.max(-0.5 * vapour, Math.min(vapour, thinner));
-      const roundOff = (ROUND_OFF * scale) / volume;
-      const last =
-        Math.abs(denser) <= LAST_STEP * liquid + roundOff / liquidSlope &&
-        Math.abs(thinner) <= LAST_STEP * vapour + roundOff / vapourSlope;
-      if (last && Math.abs(warmer) <= LAST_STEP * temperature && liquid > vapour) {
-        this.pressure = target;
-        this.pressureByTemperature = (specificGasConstant * (vapourEntropy - liquidEntropy)) / volume;
-        this.liquidDensity = liquid;
-        this.vapourDensity = vapour;
-        return temperature;
-      }
-    }
+  /** Solves the phases at a temperature (K), or at a pressure (Pa) from that temperature. */
+  private settle(temperature: number, pressure: number): number {
+    // While it is solved, and if that fails, no temperature is known.
     this.temperature = NaN;
-    throw new NoConvergenceError(
-      this.name,
-      Number.isNaN(pressure) ? `saturation at ${firstTemperature} K` : `saturation at ${pressure} Pa`,
-    );
-  }
-
-  /** A density (kg/m3) moved in one direction until it is mechanically stable at the equation's temperature. */
-  private outside(density: number, change: number): number {
-    const { equation } = this;
-    let moved = density;
-    for (let i = 0; i < MOST_STEPS; i++) {
-      equation.setDensity(moved);
-      if (equation.pressureByDensity > 0) break;
-      moved *= 1 + change;
-    }
-    return moved;
+    return this.phases.solve(temperature, pressure, this.liquidDensityGuess(temperature), this.vapourDensityGuess(temperature));
   }
 
   private expand(theta: number): void {
+    const { phases, criticalPressure } = this;
     const { b, c, d, pressure } = this.nearCritical();
     const x = Math.sqrt(Math.max(0, theta));
     const half = x * (b + c * theta);
     const middle = this.criticalDensity + d * theta;
-    this.liquidDensity = middle + half;
-    this.vapourDensity = middle - half;
-    this.pressure = this.criticalPressure - ((this.criticalPressure - pressure) * theta) / NEAR_CRITICAL;
+    phases.liquidDensity = middle + half;
+    phases.vapourDensity = middle - half;
+    phases.pressure = criticalPressure - ((criticalPressure - pressure) * theta) / NEAR_CRITICAL;
   }
 
   private nearCritical(): Expansion {
     if (this.expansion !== undefined) return this.expansion;
-    const { criticalTemperature, criticalDensity } = this;
+    const { criticalTemperature, criticalDensity, phases } = this;
     const at = (theta: number): { half: number; middle: number } => {
       this.settle(criticalTemperature * (1 - theta), NaN);
       return {
-        half: (this.liquidDensity - this.vapourDensity) / (2 * Math.sqrt(theta)),
-        middle: (this.liquidDensity + this.vapourDensity) / 2,
+        half: (phases.liquidDensity - phases.vapourDensity) / (2 * Math.sqrt(theta)),
+        middle: (phases.liquidDensity + phases.vapourDensity) / 2,
       };
     };
     const further = at(FURTHER * NEAR_CRITICAL);
     const near = at(NEAR_CRITICAL);
     const c = (further.half - near.half) / ((FURTHER - 1) * NEAR_CRITICAL);
-    this.temperature = NaN;
     this.expansion = {
       b: near.half - c * NEAR_CRITICAL,
       c,
       d: (near.middle - criticalDensity) / NEAR_CRITICAL,
-      pressure: this.pressure,
+      pressure: phases.pressure,
     };
     return this.expansion;
   }

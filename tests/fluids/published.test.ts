@@ -1,5 +1,6 @@
 import { describe, expect, it } from "vitest";
 import { air } from "../../src/fluids/data/air.js";
+import { nitrogen } from "../../src/fluids/data/nitrogen.js";
 import type { FluidData } from "../../src/fluids/fluid-data.js";
 import { HelmholtzEquation } from "../../src/fluids/helmholtz.js";
 import { fluid } from "../../src/fluids/registry.js";
@@ -22,6 +23,13 @@ const AIR: readonly PrintedState[] = [
   [270, 2000, "47.327", "46614", "96.232", "37.64", "45.74", "2899.8"],
   [400, 2000, "45.208", "52316", "113.52", "34.45", "42.27", "2822.9"],
   [2000, 2000, "32.893", "1.1424e5", "176.45", "31.86", "38.21", "2472.1"],
+];
+
+// R. Span, E. W. Lemmon, R. T Jacobsen, W. Wagner, A. Yokozeki, J. Phys. Chem. Ref. Data 29 (2000) 1361, property tables.
+const NITROGEN: readonly PrintedState[] = [
+  [280, 1, "0.43104", "8070.2", "170.41", "20.89", "29.66", "342.4"],
+  [500, 1, "0.23958", "14569", "187.54", "21.29", "29.72", "457.0"],
+  [500, 10, "2.3024", "14497", "167.93", "21.49", "30.82", "483.1"],
 ];
 
 /** The equation itself, on its own zero of enthalpy and entropy and beyond the pressures that `Fluid` allows. */
@@ -68,5 +76,37 @@ describe("published values of air", () => {
     // ISO 2533 at sea level, an ideal gas.
     expectClose("ISO 2533", fluid("air").at({ temperature: 288.15, pressure: 101325 }).density, 1.225, 5e-4);
     expect(fluid("air").at({ temperature: 293.15, pressure: 1e5 }).density).toBeCloseTo(1.1888, 3);
+  });
+});
+
+describe("published values of the pure fluids", () => {
+  it("has the states of the nitrogen paper's property tables", () => checkPrinted(nitrogen, NITROGEN));
+
+  it.each([
+    // NIST WebBook, triple points.
+    ["oxygen", 54.361, 146, 3e-3],
+    ["nitrogen", 63.151, 12520, 3e-3],
+    ["argon", 83.806, 68900, 3e-3],
+  ] as const)("%s: pressure at the triple point", (name, temperature, pressure, tolerance) => {
+    expectClose(name, fluid(name).bubblePressure(temperature), pressure, tolerance);
+  });
+
+  it.each([
+    // Tegeler et al. 1999 for argon; the others remembered from each reference equation.
+    ["nitrogen", 77.355],
+    ["oxygen", 90.188],
+    ["argon", 87.302],
+    ["neon", 27.104],
+    ["helium", 4.222],
+  ] as const)("%s: normal boiling point", (name, temperature) => {
+    expect(Math.abs(fluid(name).saturation(101325).bubbleTemperature - temperature)).toBeLessThan(0.01);
+  });
+
+  it("has saturated nitrogen at one atmosphere as a helium facility's data sheet prints it", () => {
+    // After Jacobsen et al. 1986, an older equation.
+    const { liquidDensity, vapourDensity, liquidEnthalpy, vapourEnthalpy } = fluid("nitrogen").saturation(101325);
+    expectClose("liquid density", liquidDensity, 806.5, 1e-3);
+    expectClose("vapour density", vapourDensity, 4.622, 3e-3);
+    expectClose("heat of vaporisation", vapourEnthalpy - liquidEnthalpy, 198.8e3, 3e-3);
   });
 });
