@@ -2,11 +2,11 @@ import type { Override } from "../cyclefile/define.js";
 import { InputError } from "../cyclefile/errors.js";
 import type { CycleFile } from "../cyclefile/open.js";
 import type { Condition } from "./condition.js";
-import { crossings, type Edge, type Followed, type Sample, type Turn } from "./crossings.js";
+import { crossings, type Edge, type Followed, type Turn } from "./crossings.js";
 import { solvePoint } from "./point.js";
 import type { Variable } from "./variation.js";
 
-/** Places scanned for a change of sign. */
+/** Intervals scanned for a change of sign. */
 const SCANNED = 60;
 /** Share of the span by which a bound that is itself illegal is kept away from. */
 const FROM_BOUND = 1e-3;
@@ -26,9 +26,22 @@ export interface BreakEven {
   readonly edges: readonly Edge[];
   /** What the quantity is (SI) at both ends of the range, or why it is nothing. */
   readonly ends: readonly [End, End];
+  /** The same at the file's own number; null where the file leaves it out. */
+  readonly given: End | null;
+  /** Whether any place looked at has a steady state with that quantity. */
+  readonly solved: boolean;
 }
 
-/** One end of the range. */
+/** Where and how closely to look. */
+export interface BreakEvenOptions {
+  /** In the variable's unit; left out, the key's legal range, or what lies around the file's own number. */
+  readonly range?: readonly [number, number] | undefined;
+  readonly overrides?: readonly Override[];
+  /** Intervals scanned for a change of sign. */
+  readonly scanned?: number;
+}
+
+/** The quantity at one place. */
 export interface End {
   readonly x: number;
   /** SI; null with a reason */
@@ -40,31 +53,33 @@ export interface End {
 /**
  * The numbers of a variable at which a condition turns, each a root of the quantity followed as a continuous one.
  *
- * @param range in the variable's unit; left out, the key's legal range, or what lies around the file's own number
  * @throws InputError where the variable moves in whole steps, or no range can be told
  */
 export function breakEven(
   file: CycleFile,
   variable: Variable,
   condition: Condition,
-  { range = defaultRange(variable), overrides = [] }: { range?: readonly [number, number] | undefined; overrides?: readonly Override[] } = {},
+  { range = defaultRange(variable), overrides = [], scanned = SCANNED }: BreakEvenOptions = {},
 ): BreakEven {
   if (variable.whole) throw refusal(variable, "a number that moves in whole steps", "a number that can take any value; sweep this one");
   const [from, to] = range;
+  const solveAt = (x: number) => solvePoint(file, [...overrides, variable.override(x)]);
+  const missing = `the machine has no ${condition.quantity.name}`;
   const follow: Followed = (x) => {
-    const point = solvePoint(file, [...overrides, variable.override(x)]);
-    if (point.status !== "solved") return { reason: point.reason };
-    return condition.excess(point.result) ?? { reason: `the machine has no ${condition.quantity.name}` };
+    const point = solveAt(x);
+    return point.status === "solved" ? (condition.excess(point.result) ?? { reason: missing }) : { reason: point.reason };
   };
-  const places = Array.from({ length: SCANNED + 1 }, (_, i) => (i === SCANNED ? to : from + ((to - from) * i) / SCANNED));
+  const places = Array.from({ length: scanned + 1 }, (_, i) => (i === scanned ? to : from + ((to - from) * i) / scanned));
   const { turns, edges, scan } = crossings(follow, places);
-  return { variable, condition, range, turns, edges, ends: [end(scan[0]), end(scan[SCANNED])] };
+  const solved = scan.some(({ value }) => value !== null);
+  const given = variable.given === undefined ? null : end(variable.given);
+  return { variable, condition, range, turns, edges, ends: [end(from), end(to)], given, solved };
 
-  function end(sample: Sample): End {
-    if (sample.value === null) return { x: sample.x, value: null, met: false, reason: sample.reason };
-    const point = solvePoint(file, [...overrides, variable.override(sample.x)]);
-    const value = point.status === "solved" ? condition.quantity.get(point.result) : null;
-    return { x: sample.x, value, met: sample.value < 0, reason: null };
+  function end(x: number): End {
+    const point = solveAt(x);
+    if (point.status !== "solved") return { x, value: null, met: false, reason: `${point.status}. ${point.reason}` };
+    const value = condition.quantity.get(point.result);
+    return { x, value, met: (condition.excess(point.result) ?? 0) < 0, reason: value === null ? missing : null };
   }
 }
 

@@ -39,6 +39,8 @@ export type Followed = (x: number) => number | { readonly reason: string };
 const TOLERANCE = 1e-10;
 /** Share of the span on either side of a root at which a leap is told from a crossing. */
 const BESIDE = 1e-6;
+/** Share of the way from an edge to the next scanned place at which the reason for it is asked. */
+const BEYOND = 0.02;
 /** Deepest nesting of gaps found inside gaps. */
 const MOST_GAPS = 8;
 /** Steps of the search for a dip between scanned places. */
@@ -125,9 +127,15 @@ export function crossings(follow: Followed, places: readonly number[]): Crossing
       else signChange(inside, first, depth + 1);
     }
     const valuesAbove = first === right;
-    const reason = "reason" in outside ? outside.reason : "";
+    const reason = reasonBeyond(inside.x, outside, left.value === null ? left : right);
     if (inside.value !== null && inside.value < 0) turns.push({ x: inside.x, metAbove: valuesAbove, kind: "edge", reason });
     else edges.push({ x: inside.x, valuesAbove, reason });
+  }
+
+  /** At the edge itself round-off decides which of several reasons comes first; a little beyond it, the machine does. */
+  function reasonBeyond(x: number, outside: Sample, scanned: Sample): string {
+    for (const beyond of [sample(x + BEYOND * (scanned.x - x)), outside]) if (beyond.value === null) return beyond.reason;
+    return "";
   }
 
   /** Where a scanned place lies nearer to zero than both neighbours of the same sign, the function may pass zero beside it. */
