@@ -1,4 +1,5 @@
 import { InputError } from "../cyclefile/errors.js";
+import { MOST_POINTS } from "../studies/sweep.js";
 import { optionText, type Input } from "./command.js";
 
 /**
@@ -15,8 +16,8 @@ export function requiredOption(input: Input, name: string, expected: string): st
 export function stepsOf(text: string | undefined, defaults: readonly number[]): number[] {
   if (text === undefined) return [...defaults];
   const numbers = text.split(",").map((each) => (/^\s*\d+\s*$/.test(each) ? Number(each) : NaN));
-  if (numbers.length > defaults.length || numbers.some((each) => !(each >= 2))) {
-    throw optionFault("steps", text, defaults.length === 1 ? "a whole number from 2 on" : "whole numbers from 2 on, as in 26 or 13,9");
+  if (numbers.length > defaults.length || numbers.some((each) => !(each >= 2 && each <= MOST_POINTS))) {
+    throw optionFault("steps", text, defaults.length === 1 ? `a whole number from 2 to ${MOST_POINTS}` : `whole numbers from 2 to ${MOST_POINTS}, as in 26 or 13,9`);
   }
   return defaults.map((_, i) => numbers[Math.min(i, numbers.length - 1)]);
 }
