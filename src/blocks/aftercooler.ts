@@ -1,9 +1,12 @@
 import { given, required } from "./definition.js";
 import type { BlockKind, Port, Setting } from "./kind.js";
-import { surely } from "./ports.js";
+import { flash, surely } from "./ports.js";
 import { pressureAfterDrop, pressureDrop } from "./shared-keys.js";
 import { State } from "../fluids/state.js";
 import type { Unit } from "./unit.js";
+
+/** K by which a cooler with nothing to do may warm the gas: the cold of its own pressure drop. */
+const IDLE = 1;
 
 /** Cools the compressed gas against the surroundings. */
 export const aftercooler: BlockKind = {
@@ -71,11 +74,11 @@ function placeAftercooler({ entry, inlet, outlet }: Port, { fluid, surroundings 
     }),
     figures: () => ({ heatRejected: rejected(), outletTemperature, pressureDrop: inlet.pressure - outlet.pressure }),
     impossible() {
-      // Round-off of a cooler that has nothing to do is no impossibility.
-      if (rejected() >= -1e-9 * inlet.massFlow * Math.abs(outlet.enthalpy)) return null;
+      const arrives = flash(fluid, inlet).temperature;
+      if (arrives > outletTemperature - IDLE) return null;
       return {
         quantity: "outlet-temperature",
-        reason: `the gas arrives colder than the ${outletTemperature.toFixed(2)} K at which it is to leave: the cooler would have to heat it.`,
+        reason: `the gas arrives at ${arrives.toFixed(2)} K, colder than the ${outletTemperature.toFixed(2)} K at which it is to leave: the cooler would have to heat it.`,
         advice: "Lower the outlet temperature or the approach, or leave the cooler out.",
       };
     },

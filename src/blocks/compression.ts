@@ -15,12 +15,12 @@ export interface Stage {
 /** Compresses from a pressure (Pa) and enthalpy (J/kg) to a higher pressure; the stage returned is reused. */
 export type Compression = (pressure: number, enthalpy: number, outletPressure: number) => Stage;
 
-/** The compression that a compressor's definition asks for, by whichever of the three efficiencies it gives. */
-export function compression(definition: BlockDefinition, fluid: Fluid): Compression {
+/** The compression that a compressor's definition asks for, by whichever of the three efficiencies it gives; temperature in K. */
+export function compression(definition: BlockDefinition, fluid: Fluid, surroundingsTemperature: number): Compression {
   const polytropic = given(definition, "polytropic-efficiency");
   if (polytropic !== undefined) return polytropicCompression(fluid, polytropic);
   const isothermal = given(definition, "isothermal-efficiency");
-  if (isothermal !== undefined) return isothermalCompression(fluid, isothermal);
+  if (isothermal !== undefined) return isothermalCompression(fluid, isothermal, surroundingsTemperature);
   return isentropicCompression(fluid, given(definition, "efficiency") ?? 1);
 }
 
@@ -74,14 +74,17 @@ function polytropicCompression(fluid: Fluid, efficiency: number): Compression {
 }
 
 /**
- * A machine cooled so well that the gas leaves as warm as it came: real work = reversible isothermal work,
- * (h2 - h1) - T (s2 - s1), over efficiency; what the gas does not keep goes to the cooling.
+ * A machine cooled so well that the gas is compressed at one temperature and leaves with it: that of the surroundings, or of the
+ * inlet where it is warmer. Real work = the least that such a machine needs, (h2 - h1) - T (s2 - s1), over efficiency; what
+ * the gas does not keep goes to the cooling.
  */
-function isothermalCompression(fluid: Fluid, efficiency: number): Compression {
+function isothermalCompression(fluid: Fluid, efficiency: number, surroundingsTemperature: number): Compression {
   const state = new State();
   const stage: Stage = { work: 0, enthalpy: 0, temperature: 0 };
   return (pressure, enthalpy, outletPressure) => {
-    const { temperature, entropy } = fluid.pressureEnthalpy(pressure, enthalpy, state);
+    const inlet = fluid.pressureEnthalpy(pressure, enthalpy, state);
+    const { entropy } = inlet;
+    const temperature = Math.max(inlet.temperature, surroundingsTemperature);
     fluid.temperaturePressure(temperature, outletPressure, state);
     const reversible = state.enthalpy - enthalpy - temperature * (state.entropy - entropy);
     stage.work = reversible / efficiency;

@@ -30,7 +30,7 @@ export const compressor: BlockKind = {
     },
     efficiencyKey("efficiency", "isentropic efficiency of each stage", { alternative: "efficiency" }),
     efficiencyKey("polytropic-efficiency", "efficiency of a vanishingly small pressure rise", { alternative: "efficiency" }),
-    efficiencyKey("isothermal-efficiency", "isothermal work over real work, for a machine cooled to its inlet temperature", {
+    efficiencyKey("isothermal-efficiency", "isothermal work over real work, for a machine cooled to the surroundings' temperature (or its inlet's, if warmer)", {
       alternative: "efficiency",
     }),
     {
@@ -114,7 +114,7 @@ function placeCompressor({ entry, inlet, outlet }: Port, { fluid, surroundings }
   const intercoolerDrop = given(entry, "intercooler-pressure-drop") ?? 0;
   const driveEfficiency = given(entry, "drive-efficiency") ?? 1;
   const ratio = stageRatio(inlet.pressure, outlet.pressure, stages, intercoolerDrop);
-  const compress: Compression = compression(entry, fluid);
+  const compress: Compression = compression(entry, fluid, surroundings.temperature);
   const discharges = new Float64Array(stages);
   /** J/kg into the gas, and J/kg rejected by jacket and intercoolers, as of the last evaluation. */
   let work = 0;

@@ -26,9 +26,11 @@ const SMALL = 0.02;
 const SAGGING = 0.03;
 /** K; a difference that misses its target by less is round-off of two flashes, not a crossing. */
 const ROUND_OFF = 1e-8;
-/** Pieces in which the conductance is first summed, and the most that it may come to be. */
+/** Pieces in which the conductance is first summed, closer towards the ends where the difference changes most, and the most. */
 const FIRST_PIECES = 20;
-const MOST_PIECES = 600;
+const MOST_PIECES = 300;
+/** Share of the largest duty to which the duty of a conductance is found. */
+const DUTY_TOLERANCE = 1e-13;
 /** Relative change of the conductance on halving its pieces at which it counts as known. */
 const CONDUCTANCE_TOLERANCE = 1e-3;
 
@@ -42,7 +44,9 @@ export class Counterflow {
   /** W into the cold stream from outside */
   heatLeak = 0;
   /** Places between which the conductance is summed; once made finer it stays so. */
-  private grid: number[] = Array.from({ length: FIRST_PIECES + 1 }, (_, i) => i / FIRST_PIECES);
+  private grid: number[] = Array.from({ length: FIRST_PIECES + 1 }, (_, i) => (1 - Math.cos((Math.PI * i) / FIRST_PIECES)) / 2);
+  /** Duty over the largest, of the last search for a conductance. */
+  private share = 0.9;
   private readonly warmState = new State();
   private readonly coldState = new State();
 
@@ -170,23 +174,17 @@ export class Counterflow {
    */
   conductance(duty: number): number {
     let pieces = this.piecesOf(duty);
-    for (;;) {
-      const sum = pieces.reduce((total, piece) => total + piece.sum, 0);
-      if (!Number.isFinite(sum) || pieces.length >= MOST_PIECES) break;
-      const noticeable = (CONDUCTANCE_TOLERANCE * sum) / pieces.length;
-      let refined = false;
-      pieces = pieces.flatMap((piece) => {
-        if (piece.halved) return [piece];
-        const halves = this.halve(duty, piece);
-        piece.halved = true;
-        if (Math.abs(halves[0].sum + halves[1].sum - piece.sum) <= noticeable) return [piece];
-        refined = true;
-        return halves;
-      });
-      if (!refined) break;
+    let sum = pieces.reduce((total, piece) => total + piece.sum, 0);
+    while (Number.isFinite(sum) && pieces.length < MOST_PIECES) {
+      const halved = pieces.map((piece) => this.halve(duty, piece));
+      const changes = halved.map(([first, second], i) => Math.abs(first.sum + second.sum - pieces[i].sum));
+      if (changes.reduce((total, change) => total + change, 0) <= CONDUCTANCE_TOLERANCE * sum) break;
+      const noticeable = (CONDUCTANCE_TOLERANCE * sum) / (2 * pieces.length);
+      pieces = pieces.flatMap((piece, i) => (changes[i] > noticeable ? halved[i] : [piece]));
+      sum = pieces.reduce((total, piece) => total + piece.sum, 0);
     }
     this.grid = [0, ...pieces.map(({ to }) => to)];
-    return duty * pieces.reduce((total, piece) => total + piece.sum, 0);
+    return duty * sum;
   }
 
   private piecesOf(duty: number): Piece[] {
@@ -230,7 +228,13 @@ export class Counterflow {
       return duty / this.summedConductance(duty) - duty / conductance;
     };
     for (;;) {
-      const duty = bracketedRoot(spare, 0, most, {}, undefined, -most / conductance);
+      // The share of the last time splits the bracket: from one pass to the next it hardly changes.
+      const guess = this.share * most;
+      const spareThere = spare(guess);
+      const [low, high, spareLow, spareHigh] =
+        spareThere > 0 ? [guess, most, spareThere, -most / conductance] : [0, guess, spare(0), spareThere];
+      const duty = bracketedRoot(spare, low, high, { tolerance: DUTY_TOLERANCE * most }, spareLow, spareHigh);
+      this.share = duty / most;
       const pieces = this.grid.length;
       this.conductance(duty);
       if (this.grid.length === pieces) return duty;
@@ -245,12 +249,10 @@ interface Piece {
   readonly before: number;
   readonly after: number;
   readonly sum: number;
-  /** Whether halving it has been tried and changed nothing. */
-  halved: boolean;
 }
 
 function pieceOf(from: number, to: number, before: number, after: number): Piece {
-  return { from, to, before, after, sum: (to - from) / logarithmicMean(before, after), halved: false };
+  return { from, to, before, after, sum: (to - from) / logarithmicMean(before, after) };
 }
 
 /**

@@ -22,6 +22,8 @@ const MOST_PASSES = 600;
 /** How much more than `SETTLED` the last pass may change: its round-off against that of the pass before. */
 const SETTLED_AGAIN = 10;
 const MOST_ATTEMPTS = 5;
+/** Share of the way back to the start from which a further attempt sets out: above its end, but not far. */
+const NOT_ALL_THE_WAY = 0.05;
 /** A step into states that cannot be evaluated is halved so often before the machine counts as having run out of range. */
 const MOST_HALVINGS = 24;
 /** Places between the steady state and the coldest liquid at which a colder one is looked for. */
@@ -49,8 +51,9 @@ export function settle(network: Network, lookColder: boolean): Settled {
   const capacity = heatCapacity(network);
   // With several tears one may warm at first all the same: a leak into a stream that nothing cools yet.
   if (change.every((value) => value > SETTLED * capacity)) throw tooWarm(network, change);
+  let from = start;
   for (let attempt = 1; ; attempt++) {
-    const x = size === 1 ? coolOneTear(pass, start, change, capacity) : coolTears(pass, start, change, capacity);
+    const x = size === 1 ? coolOneTear(pass, from, change, capacity) : coolTears(pass, from, change, capacity);
     const otherSteadyStates = lookColder && hasColder(network, pass, x, capacity);
     guarded(pass, () => pass.run(x, change));
     if (largest(change) <= SETTLED_AGAIN * SETTLED * capacity) {
@@ -59,7 +62,12 @@ export function settle(network: Network, lookColder: boolean): Settled {
     }
     // An exchanger has found on the way that it must be summed in finer pieces, and keeps to that from now on.
     if (attempt === MOST_ATTEMPTS) throw unsettled(pass, largest(change) / capacity);
-    guarded(pass, () => pass.run(start, change));
+    from = x.map((value, i) => value + NOT_ALL_THE_WAY * (start[i] - value));
+    guarded(pass, () => pass.run(from, change));
+    if (change.some((value) => value > 0)) {
+      from = start;
+      guarded(pass, () => pass.run(from, change));
+    }
   }
 }
 

@@ -7,19 +7,23 @@ import { solve } from "../../src/cycle/solve.js";
 import { entry } from "./definitions.js";
 
 const between = (min: number, max: number) => fc.integer({ min: 0, max: 1000 }).map((n) => min + ((max - min) * n) / 1000);
-const percent = between(0.05, 1);
+const percent = between(0.1, 1);
 
 const sizes = fc.oneof(
   between(0.2, 1).map((effectiveness) => ({ effectiveness })),
   between(0, 20).map((approach) => ({ approach })),
-  between(0.5, 300).map((conductance) => ({ conductance })),
+  between(0.3, 30).map((transferUnits) => ({ transferUnits })),
 );
 const compression = fc.oneof(
-  percent.map((efficiency) => ({ efficiency })),
-  percent.map((polytropic) => ({ "polytropic-efficiency": Math.max(polytropic, 0.3) })),
+  between(0.25, 1).map((efficiency) => ({ efficiency })),
+  between(0.3, 1).map((polytropic) => ({ "polytropic-efficiency": polytropic })),
   percent.map((isothermal) => ({ "isothermal-efficiency": isothermal })),
 );
-const duties = fc.oneof(between(0, 400).map((heat) => ({ heat })), between(70, 290).map((temperature) => ({ "outlet-temperature": temperature })));
+/** J/kg, or K at the outlet. */
+const duties = fc.oneof(
+  { arbitrary: between(0, 2e4).map((perMass) => ({ perMass })), weight: 3 },
+  { arbitrary: between(70, 290).map((temperature) => ({ temperature })), weight: 1 },
+);
 
 /** Machines with one or two expanders or a valve, closed or open, of any quality: legal, and not all of them possible. */
 const machines = fc
@@ -29,7 +33,7 @@ const machines = fc
     volumeFlow: fc.boolean(),
     throttled: fc.boolean(),
     lowPressure: between(1.15e5, 3e5),
-    ratio: between(1.5, 30),
+    ratio: between(1.5, 15),
     compression,
     aftercooled: between(0, 25),
     sizes: fc.tuple(sizes, sizes),
@@ -44,6 +48,10 @@ const machines = fc
     const highPressure = m.lowPressure * m.ratio;
     const middle = m.stages === 1 ? highPressure : Math.sqrt(m.lowPressure * (highPressure - 2 * m.drop));
     const drop = { "pressure-drop": m.drop };
+    const size = (each: typeof m.sizes[number]) =>
+      "transferUnits" in each ? { conductance: each.transferUnits * 1005 * m.flow } : each;
+    const isothermal = "isothermal-efficiency" in m.compression;
+    const duty: Record<string, number> = "perMass" in m.duty ? { heat: m.duty.perMass * m.flow } : { "outlet-temperature": m.duty.temperature };
     const expand = (name: string, pressure: number, efficiency: number) =>
       m.throttled && name === "T2"
         ? entry("valve", name, { "outlet-pressure": pressure })
@@ -56,13 +64,13 @@ const machines = fc
       flow: m.volumeFlow ? { kind: "inlet volume", value: m.flow / 1.2 } : { kind: "mass", value: m.flow },
       loop: [
         entry("compressor", "C1", { "outlet-pressure": highPressure, ...m.compression }),
-        entry("aftercooler", "A1", { approach: m.aftercooled, ...drop }),
-        entry("recuperator", "HX1", { ...m.sizes[0], ...drop }, "warm"),
+        entry("aftercooler", "A1", { approach: isothermal ? 0 : m.aftercooled, ...drop }),
+        entry("recuperator", "HX1", { ...size(m.sizes[0]), ...drop }, "warm"),
         ...(m.stages === 2
-          ? [expand("T1", middle, m.efficiencies[0]), entry("recuperator", "HX2", { ...m.sizes[1], "heat-leak": m.heatLeak }, "warm")]
+          ? [expand("T1", middle, m.efficiencies[0]), entry("recuperator", "HX2", { ...size(m.sizes[1]), "heat-leak": m.heatLeak }, "warm")]
           : []),
         expand("T2", m.lowPressure, m.efficiencies[1]),
-        entry("load", "L1", m.duty),
+        entry("load", "L1", duty),
         ...(m.stages === 2 ? [entry("recuperator", "HX2", {}, "cold")] : []),
         entry("line", "P1", { "heat-leak": m.heatLeak }),
         entry("recuperator", "HX1", { "pressure-drop": m.drop / 2 }, "cold"),
@@ -101,9 +109,9 @@ describe("a random legal machine", () => {
           expect(error.message).not.toMatch(/NaN|undefined/);
         }
       }),
-      { seed: 20260101, numRuns: 1500 },
+      { seed: 20260101, numRuns: 400 },
     );
     console.info(`random machines: ${counts.solved} solved, ${counts.refused} refused with a reason`);
-    expect(counts.solved).toBeGreaterThan(400);
+    expect(counts.solved).toBeGreaterThan(120);
   });
 });
