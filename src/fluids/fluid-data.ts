@@ -1,3 +1,5 @@
+import type { TransportData } from "./transport-data.js";
+
 /** Coefficients of one fluid, as published: molar, on the paper's own reducing point and gas constant. */
 export interface FluidData {
   readonly name: string;
@@ -15,6 +17,8 @@ export interface FluidData {
   readonly ideal: IdealTerms;
   readonly residual: ResidualTerms;
   readonly phases: BubbleAndDewCurves | VapourPressureCurve;
+  /** Missing where no published correlation is at hand. */
+  readonly transport?: TransportData;
 }
 
 /** Where the equation may be used here. */

@@ -1,45 +1,16 @@
-import { NotFiniteError, OutOfRangeError, FluidError } from "./errors.js";
+import { FluidError, NoCorrelationError, NotFiniteError, OutOfRangeError } from "./errors.js";
+import type { FluidState, StateInput } from "./fluid-state.js";
 import { Flash } from "./flash.js";
 import type { FluidData } from "./fluid-data.js";
 import type { Saturation } from "./saturation.js";
 import { ENTHALPY, ENTROPY } from "./starting-points.js";
-import { State, type Phase } from "./state.js";
+import { State } from "./state.js";
+import { Transport } from "./transport.js";
+
+export type { FluidState, StateInput } from "./fluid-state.js";
 
 /** Share of a limit by which an input may lie beyond it: a state at the limit comes back from a search with round-off. */
 const ROUND_OFF = 1e-9;
-
-/** The two properties that fix a state. */
-export type StateInput =
-  | { /** K */ readonly temperature: number; /** Pa */ readonly pressure: number }
-  | { /** Pa */ readonly pressure: number; /** J/kg */ readonly enthalpy: number }
-  | { /** Pa */ readonly pressure: number; /** J/(kg K) */ readonly entropy: number }
-  | { /** Pa */ readonly pressure: number; /** mass of vapour over mass of fluid */ readonly quality: number }
-  | { /** K */ readonly temperature: number; /** kg/m3 */ readonly density: number };
-
-/** A state in plain numbers, SI units, mass-based; null where a property has no meaning. */
-export interface FluidState {
-  /** K */
-  readonly temperature: number;
-  /** Pa */
-  readonly pressure: number;
-  /** kg/m3 */
-  readonly density: number;
-  /** J/kg */
-  readonly enthalpy: number;
-  /** J/(kg K) */
-  readonly entropy: number;
-  /** J/kg */
-  readonly internalEnergy: number;
-  /** J/(kg K) */
-  readonly isobaricHeatCapacity: number | null;
-  /** J/(kg K) */
-  readonly isochoricHeatCapacity: number | null;
-  /** m/s */
-  readonly speedOfSound: number | null;
-  /** Mass of vapour over mass of fluid: 0 in the liquid, 1 in the gas, null above the critical pressure. */
-  readonly vapourFraction: number | null;
-  readonly phase: Phase;
-}
 
 /**
  * A fluid and its states, SI units, mass-based; enthalpy and entropy are zero in the saturated liquid at 101.325 kPa.
@@ -69,10 +40,12 @@ export class Fluid {
   readonly lowestSaturationPressure: number;
 
   private readonly flash: Flash;
+  private readonly transport: Transport;
 
   constructor(private readonly data: FluidData) {
     this.flash = new Flash(data);
     const { boundary, equation } = this.flash;
+    this.transport = new Transport(data, equation);
     this.name = data.name;
     this.source = data.source;
     this.molarMass = data.molarMass;
@@ -186,6 +159,24 @@ export class Fluid {
   }
 
   /**
+   * Viscosity (Pa s) in a state that this fluid has written.
+   *
+   * @throws NoCorrelationError with the reason: two phases, or no published correlation at hand
+   */
+  viscosity(state: State): number {
+    return this.transport.viscosity(state);
+  }
+
+  /**
+   * Thermal conductivity (W/(m K)) in a state that this fluid has written.
+   *
+   * @throws NoCorrelationError with the reason: two phases, or no published correlation at hand
+   */
+  thermalConductivity(state: State): number {
+    return this.transport.thermalConductivity(state);
+  }
+
+  /**
    * The state fixed by any of the pairs of properties, as a plain object.
    *
    * @throws OutOfRangeError, NotFiniteError; NoConvergenceError if a search fails
@@ -207,6 +198,8 @@ export class Fluid {
       speedOfSound: orNull(state.speedOfSound),
       vapourFraction: orNull(state.vapourFraction),
       phase: state.phase,
+      viscosity: orNoCorrelation(() => this.viscosity(state)),
+      thermalConductivity: orNoCorrelation(() => this.thermalConductivity(state)),
     });
   }
 
@@ -266,6 +259,15 @@ export class Fluid {
   ): NotFiniteError | OutOfRangeError {
     if (!Number.isFinite(value)) return new NotFiniteError(this.name, quantity, value);
     return new OutOfRangeError(this.name, { quantity, value, minimum, maximum, unit, subject, reason });
+  }
+}
+
+function orNoCorrelation(find: () => number): number | null {
+  try {
+    return find();
+  } catch (error) {
+    if (error instanceof NoCorrelationError) return null;
+    throw error;
   }
 }
 

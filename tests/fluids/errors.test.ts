@@ -2,7 +2,7 @@ import { readdirSync } from "node:fs";
 import { fileURLToPath } from "node:url";
 import { describe, expect, it } from "vitest";
 import { FluidError, NotFiniteError, OutOfRangeError, UnknownFluidError } from "../../src/fluids/errors.js";
-import type { StateInput } from "../../src/fluids/fluid.js";
+import type { StateInput } from "../../src/fluids/fluid-state.js";
 import { fluid, fluidNames } from "../../src/fluids/registry.js";
 import { State } from "../../src/fluids/state.js";
 

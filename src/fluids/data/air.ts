@@ -87,4 +87,35 @@ export const air: FluidData = {
       vapourCompressibility: [0.32572, 0.33523, 0.96644, -0.36434, 1.5538, -2.0382],
     },
   },
+  transport: {
+    kind: "lemmon-jacobsen",
+    source: "E. W. Lemmon, R. T Jacobsen, Int. J. Thermophys. 25 (2004) 21-69",
+    reducingTemperature: 132.6312, // K
+    reducingDensity: 10447.7, // mol/m3
+    reducingPressure: 3785020, // Pa
+    collisionDiameter: 0.36, // nm
+    collisionTemperature: 103.3, // K
+    // N, t, d, l
+    viscosity: [
+      [1.072e-05, 0.2, 1, 0],
+      [1.122e-06, 0.05, 4, 0],
+      [2.019e-09, 2.4, 9, 0],
+      [-8.876e-06, 0.6, 1, 1],
+      [-2.916e-08, 3.6, 8, 1],
+    ],
+    diluteConductivity: { perViscosity: 0.001308, terms: [[0.001405, -1.1], [-0.001036, -0.3]] },
+    conductivity: [
+      [0.008743, 0.1, 1, 0],
+      [0.01476, 0, 2, 0],
+      [-0.01662, 0.5, 3, 2],
+      [0.003793, 2.7, 7, 2],
+      [-0.006142, 0.3, 7, 2],
+      [-0.0003778, 1.3, 11, 2],
+    ],
+    enhancement: {
+      cutoff: 0.31, // nm
+      amplitude: 0.11, // nm
+      referenceTemperature: 265.262, // K
+    },
+  },
 };

@@ -108,4 +108,37 @@ export const argon: FluidData = {
       vapourCompressibility: [0.28574, 0.46486, 0.89768, -1.0562, 2.7833, -2.5611],
     },
   },
+  transport: {
+    kind: "lemmon-jacobsen",
+    source: "E. W. Lemmon, R. T Jacobsen, Int. J. Thermophys. 25 (2004) 21-69",
+    reducingTemperature: 150.687, // K
+    reducingDensity: 13407.43, // mol/m3
+    reducingPressure: 4863000, // Pa
+    collisionDiameter: 0.335, // nm
+    collisionTemperature: 143.2, // K
+    // N, t, d, l
+    viscosity: [
+      [1.219e-05, 0.42, 1, 0],
+      [1.399e-05, 0, 2, 0],
+      [5.027e-09, 0.95, 10, 0],
+      [-1.893e-05, 0.5, 5, 2],
+      [-6.698e-06, 0.9, 1, 4],
+      [-3.827e-06, 0.8, 2, 4],
+    ],
+    diluteConductivity: { perViscosity: 0.0008158, terms: [[-0.000432, -0.77]] },
+    conductivity: [
+      [0.01373, 0, 1, 0],
+      [0.01007, 0, 2, 0],
+      [0.0007375, 0, 4, 0],
+      [-0.03396, 0.8, 5, 2],
+      [0.02047, 1.2, 6, 2],
+      [-0.002274, 0.8, 9, 2],
+      [-0.003973, 0.5, 1, 4],
+    ],
+    enhancement: {
+      cutoff: 0.32, // nm
+      amplitude: 0.13, // nm
+      referenceTemperature: 301.374, // K
+    },
+  },
 };

@@ -87,4 +87,24 @@ export const helium: FluidData = {
       vapourCompressibility: [0.29939, 0.34829, 0.44307, 0.31146, 0.029233, -0.35486],
     },
   },
+  transport: {
+    kind: "helium",
+    source:
+      "viscosity V. D. Arp, R. D. McCarty, D. G. Friend, NIST Technical Note 1334 (1998); conductivity B. A. Hands, V. D. Arp, Cryogenics 21 (1981) 697-703",
+    diluteViscosity: [-0.135311743, 1.00347841, 1.20654649, -0.149564551, 0.012520841],
+    denseViscosity: [
+      [-47.5295259, 87.6799309, -42.0741589, 8.33128289, -0.589252385],
+      [547.309267, -904.870586, 431.404928, -81.4504854, 5.37008433],
+      [-1684.39324, 3331.0863, -1632.19172, 308.804413, -20.2936367],
+    ],
+    hotViscosity: { n: 196, t: 0.71938, exponents: [-4.1249, 12.451, -295.67] },
+    diluteConductivity: { n: 2.7870034e-3, t: 0.7034007057, exponents: [0, 3.739232544, -26.20316969, 59.82252246, -49.26397634] },
+    conductivity: {
+      linear: [1.86297053e-4, -1.427549651e-4, 3.290833592e-5, -7.275964435e-7],
+      cubic: [-5.213335363e-8, 4.492659933e-8, -5.924416513e-9],
+      logarithmic: [7.087321137e-6, -6.013335678e-6, 8.067145814e-7, 0, 3.995125013e-7],
+    },
+    logarithmDensity: 68, // kg/m3
+    lowestConductivityTemperature: 12, // K
+  },
 };

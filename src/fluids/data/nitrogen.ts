@@ -105,4 +105,35 @@ export const nitrogen: FluidData = {
       vapourCompressibility: [0.28698, 0.47672, 0.84892, -0.84204, 2.5562, -2.5481],
     },
   },
+  transport: {
+    kind: "lemmon-jacobsen",
+    source: "E. W. Lemmon, R. T Jacobsen, Int. J. Thermophys. 25 (2004) 21-69",
+    reducingTemperature: 126.192, // K
+    reducingDensity: 11183.9, // mol/m3
+    reducingPressure: 3395800, // Pa
+    collisionDiameter: 0.3656, // nm
+    collisionTemperature: 98.94, // K
+    // N, t, d, l
+    viscosity: [
+      [1.072e-05, 0.1, 2, 0],
+      [3.989e-08, 0.25, 10, 1],
+      [1.208e-09, 3.2, 12, 1],
+      [-7.402e-06, 0.9, 2, 2],
+      [4.62e-06, 0.3, 1, 3],
+    ],
+    diluteConductivity: { perViscosity: 0.001511, terms: [[0.002117, -1], [-0.003332, -0.7]] },
+    conductivity: [
+      [0.008862, 0, 1, 0],
+      [0.03111, 0.03, 2, 0],
+      [-0.07313, 0.2, 3, 1],
+      [0.02003, 0.8, 4, 2],
+      [-0.0007096, 0.6, 8, 2],
+      [0.0002672, 1.9, 10, 2],
+    ],
+    enhancement: {
+      cutoff: 0.4, // nm
+      amplitude: 0.17, // nm
+      referenceTemperature: 252.384, // K
+    },
+  },
 };

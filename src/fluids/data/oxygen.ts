@@ -106,4 +106,35 @@ export const oxygen: FluidData = {
       vapourCompressibility: [0.28909, 0.4012, 1.1578, -1.3448, 2.8108, -2.5015],
     },
   },
+  transport: {
+    kind: "lemmon-jacobsen",
+    source: "E. W. Lemmon, R. T Jacobsen, Int. J. Thermophys. 25 (2004) 21-69",
+    reducingTemperature: 154.581, // K
+    reducingDensity: 13630, // mol/m3
+    reducingPressure: 5043000, // Pa
+    collisionDiameter: 0.3428, // nm
+    collisionTemperature: 118.5, // K
+    // N, t, d, l
+    viscosity: [
+      [1.767e-05, 0.05, 1, 0],
+      [4.042e-07, 0, 5, 0],
+      [1.077e-10, 2.1, 12, 0],
+      [3.51e-07, 0, 8, 1],
+      [-1.367e-05, 0.5, 1, 2],
+    ],
+    diluteConductivity: { perViscosity: 0.001036, terms: [[0.006283, -0.9], [-0.004262, -0.6]] },
+    conductivity: [
+      [0.01531, 0, 1, 0],
+      [0.008898, 0, 3, 0],
+      [-0.0007336, 0.3, 4, 0],
+      [0.006728, 4.3, 5, 2],
+      [-0.004374, 0.5, 7, 2],
+      [-0.0004747, 1.8, 10, 2],
+    ],
+    enhancement: {
+      cutoff: 0.51, // nm
+      amplitude: 0.24, // nm
+      referenceTemperature: 309.162, // K
+    },
+  },
 };
