@@ -19,7 +19,7 @@ function register(program: Program, command: Command): void {
   for (const { flag, value, help, choices, default: fallback, repeatable } of command.options) {
     const option = new ProgramOption(value === undefined ? flag : `${flag} <${value}>`, help);
     if (choices !== undefined) option.choices(choices);
-    if (fallback !== undefined) option.default(fallback);
+    if (fallback !== undefined) option.default(fallback, fallback.replaceAll(",", ", "));
     if (repeatable === true) option.argParser((text: string, before: string[] | undefined) => [...(before ?? []), text]);
     entry.addOption(option);
   }

@@ -56,7 +56,7 @@ function oneBlock(block: BlockResult): string {
     }
     line += ` ${piece}`;
   });
-  return [...lines, line].join("\n");
+  return [...lines, line.trimEnd()].join("\n");
 }
 
 /** A leak or a drop that was left at zero says nothing. */

@@ -7,7 +7,8 @@ export function fixed(value: number, decimals: number): string {
 /** A number with a fixed count of significant digits, without exponent where it is of everyday size. */
 export function significant(value: number, digits: number): string {
   if (value === 0) return "0";
-  const size = Math.floor(Math.log10(Math.abs(value)));
+  // The size of what is printed: 9.9996 to four digits is 10.00.
+  const size = Math.floor(Math.log10(Math.abs(Number(value.toPrecision(digits)))));
   if (size < -4 || size > 8) return value.toExponential(digits - 1);
   return fixed(value, Math.max(0, digits - 1 - size));
 }
