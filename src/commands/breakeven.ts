@@ -13,7 +13,7 @@ export const breakeven: Command = {
   ],
   examples: [
     ["rimeloop breakeven cycles/bench-cooler.yaml --vary T1.efficiency", "the expander efficiency from which liquid forms"],
-    ["rimeloop breakeven cycles/bench-cooler.yaml --vary L1.heat='1 W..500 W' --until 'cold-end.temperature < 100 K'", "the heat up to which the cold end stays below 100 K"],
+    ["rimeloop breakeven cycles/bench-cooler.yaml --vary L1.heat=1..500W --until 'cold-end.temperature < 100 K'", "the heat up to which the cold end stays below 100 K"],
   ],
   async run(input, terminal) {
     const { loadCycleFile } = await import("../cyclefile/load.js");

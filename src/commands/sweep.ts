@@ -18,8 +18,8 @@ export const sweep: Command = {
   arguments: [fileArgument],
   options: [
     { flag: "--vary", value: "NAME.key=FROM..TO", help: "the number to move: T1.efficiency=30%..80%, or a list C1.stages=1,2,3; given twice it makes a map", repeatable: true },
-    { flag: "--steps", value: "N", help: `points of a range, both ends counted (${STEPS}; for a map ${MAP_STEPS.join(",")})` },
-    { flag: "--show", value: "RESULTS", help: `results, with commas between: ${SHOWN}, second-law-efficiency, T1.outlet-temperature, …` },
+    { flag: "--steps", value: "N", help: `points of a range, both ends counted: ${STEPS} unless given; of a map ${MAP_STEPS.join(",")}` },
+    { flag: "--show", value: "RESULTS", help: `results, with commas between: ${SHOWN.replaceAll(",", ", ")}, second-law-efficiency, T1.outlet-temperature, …` },
     { flag: "--until", value: "CONDITION", help: "condition whose break-even is marked, as in breakeven", default: "liquefies" },
     { flag: "--format", value: "FORMAT", help: "text, csv (all digits) or json (SI)", choices: ["text", "csv", "json"], default: "text" },
     { flag: "--out", value: "FILE", help: "write to a file; csv and json row by row, as machines are solved" },
@@ -28,8 +28,8 @@ export const sweep: Command = {
   ],
   examples: [
     ["rimeloop sweep cycles/bench-cooler.yaml --vary T1.efficiency=30%..80%", "what a better turbine brings"],
-    ["rimeloop sweep cycles/bench-cooler.yaml --vary T1.efficiency=30%..80% --vary HX1.effectiveness=85%..97%", "which pairs liquefy"],
-    ["rimeloop sweep cycles/bench-cooler.yaml --vary let.p_high=4..12bar --show capacity,net-power --out p.csv --format csv", "a table for a spreadsheet"],
+    ["rimeloop sweep cycles/bench-cooler.yaml --vary T1.efficiency=30..80% --vary HX1.approach=2..12K", "which pairs liquefy"],
+    ["rimeloop sweep cycles/bench-cooler.yaml --vary flow=4..12g/s --format csv --out flow.csv", "a table for a spreadsheet"],
   ],
   async run(input, terminal) {
     const { loadCycleFile } = await import("../cyclefile/load.js");

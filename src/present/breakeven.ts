@@ -25,7 +25,7 @@ export function breakEvenText(answer: BreakEven): string {
     lines.push(wrap(`${end === given ? "in the file, " : ""}at ${at(end.x)}: ${endText(end, answer)}`, "  "));
   }
   for (const { x, valuesAbove, reason } of edges) {
-    lines.push(wrap(`${valuesAbove ? "below" : "above"} ${at(x)} there is no steady state: ${reason}`, "  "));
+    lines.push(wrap(`${valuesAbove ? "below" : "above"} ${at(x)}: ${reason}`, "  "));
   }
   return lines.join("\n");
 }
@@ -35,7 +35,7 @@ export function turnText({ x, metAbove, kind, reason }: Turn, { variable }: Pick
   const place = `${variable.address} = ${withUnit(x.toPrecision(DIGITS), variable.unit)}`;
   const sides = metAbove ? "met above, not below" : "met below, not above";
   if (kind === "jump") return `${place}: ${sides}; the machine jumps there from one steady state to another`;
-  if (kind === "edge") return `${place}: ${sides}, where there is no steady state: ${reason ?? ""}`;
+  if (kind === "edge") return `${place}: ${sides}: ${reason ?? ""}`;
   return `${place}: ${sides}`;
 }
 

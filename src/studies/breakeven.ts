@@ -67,7 +67,7 @@ export function breakEven(
   const missing = `the machine has no ${condition.quantity.name}`;
   const follow: Followed = (x) => {
     const point = solveAt(x);
-    return point.status === "solved" ? (condition.excess(point.result) ?? { reason: missing }) : { reason: point.reason };
+    return point.status === "solved" ? (condition.excess(point.result) ?? { reason: missing }) : { reason: `${point.status}. ${point.reason}` };
   };
   const places = Array.from({ length: scanned + 1 }, (_, i) => (i === scanned ? to : from + ((to - from) * i) / scanned));
   const { turns, edges, scan } = crossings(follow, places);
