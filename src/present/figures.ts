@@ -2,7 +2,7 @@ import type { Figure } from "../blocks/keys.js";
 import { blockKind } from "../blocks/registry.js";
 import type { BlockResult } from "../cycle/result.js";
 import { bars, fixed, kelvin, percent, significant, watts } from "./numbers.js";
-import { WIDTH } from "./wrap.js";
+import { wrapItems } from "./wrap.js";
 
 const WRITE: Readonly<Record<string, (value: number) => string>> = {
   fraction: (value) => percent(value),
@@ -45,18 +45,8 @@ function oneBlock(block: BlockResult): string {
     said.add(text);
     return [`${figure.label} ${text}`];
   });
-  const heading = `${block.name} (${block.kind})`.padEnd(HEADING - 1);
-  const lines: string[] = [];
-  let line = heading;
-  parts.forEach((part, i) => {
-    const piece = i < parts.length - 1 ? `${part};` : part;
-    if (line.trim() !== "" && line !== heading && line.length + 1 + piece.length > WIDTH) {
-      lines.push(line);
-      line = " ".repeat(HEADING - 1);
-    }
-    line += ` ${piece}`;
-  });
-  return [...lines, line.trimEnd()].join("\n");
+  const heading = `${`${block.name} (${block.kind})`.padEnd(HEADING - 1)} `;
+  return wrapItems(parts, { separator: ";", heading, indent: " ".repeat(HEADING) });
 }
 
 /** A leak or a drop that was left at zero says nothing. */

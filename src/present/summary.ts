@@ -42,7 +42,7 @@ function condition({ reached, margin, where }: CycleResult["liquefaction"], liqu
 }
 
 function threshold({ required, given, reason, parameter }: CycleResult["liquefaction"]): string {
-  if (required === null) return `no efficiency of the expanders marks where it begins: ${reason}`;
+  if (required === null) return `no expander efficiency decides it: ${reason}`;
   const begins = `it begins with ${parameter} at ${percent(required, 2)}`;
   if (given === null) return begins;
   const apart = `${fixed(Math.abs(given - required) * 100, 1)} points`;
@@ -52,7 +52,7 @@ function threshold({ required, given, reason, parameter }: CycleResult["liquefac
 function power({ power: bought, performance: { cop, secondLawEfficiency }, massFlow }: CycleResult): Line {
   const figures = [
     `${watts(bought.net)} bought for ${significant(massFlow * 1e3, 4)} g/s`,
-    `${watts(bought.compression)} into the gas, ${watts(bought.expansion)} out of it`,
+    `${watts(bought.compression)} into the gas${bought.expansion > 0 ? `, ${watts(bought.expansion)} out of it` : ""}`,
     ...(cop === null ? [] : [`COP ${significant(cop, 3)}`]),
     ...(secondLawEfficiency === null ? [] : [`second-law efficiency ${percent(secondLawEfficiency, 2)}`]),
   ];

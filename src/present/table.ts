@@ -7,10 +7,11 @@ export interface Column {
 }
 
 /** Between two columns. */
-const GAP = "  ";
+export const GAP = "  ";
 
-/** Rows in aligned columns under their headings, units in the second line. */
-export function textTable(columns: readonly Column[], rows: readonly (readonly string[])[]): string {
+/** Rows in aligned columns under their headings, units in the second line. A cell may have more than one line. */
+export function textTable(columns: readonly Column[], given: readonly (readonly string[])[]): string {
+  const rows = given.flatMap(linesOfRow);
   const widths = columns.map(({ heading, unit = "" }, i) => Math.max(heading.length, unit.length, ...rows.map((row) => row[i].length)));
   const line = (cells: readonly string[]): string =>
     cells
@@ -21,6 +22,12 @@ export function textTable(columns: readonly Column[], rows: readonly (readonly s
   if (columns.some(({ unit = "" }) => unit !== "")) headings.push(line(columns.map(({ unit = "" }) => unit)));
   const rule = "-".repeat(widths.reduce((sum, width) => sum + width, GAP.length * (widths.length - 1)));
   return [...headings, rule, ...rows.map(line)].join("\n");
+}
+
+/** A row as many times as its tallest cell has lines. */
+function linesOfRow(row: readonly string[]): string[][] {
+  const lines = row.map((cell) => cell.split("\n"));
+  return Array.from({ length: Math.max(...lines.map(({ length }) => length)) }, (_, i) => lines.map((each) => each[i] ?? ""));
 }
 
 /** The same as comma-separated values; headings carry their unit. */

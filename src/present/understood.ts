@@ -4,22 +4,28 @@ import type { CycleDefinition, Flow } from "../cycle/definition.js";
 import { planPressures } from "../cycle/plan.js";
 import { figureText } from "./figures.js";
 import { bars, fixed, significant } from "./numbers.js";
-import { textTable } from "./table.js";
+import { GAP, textTable } from "./table.js";
+import { WIDTH, wrap, wrapItems } from "./wrap.js";
+
+/** Columns that a pressure takes. */
+const PRESSURE = 5;
 
 /** What a checked file says, for its writer to compare with what was meant. */
 export function understood(definition: CycleDefinition): string {
   const { title, fluid, circuit, surroundings, flow, loop } = definition;
   const { before, behind } = planPressures(definition);
+  const names = loop.map(({ name, side }) => (side === undefined ? name : `${name} ${side}`));
+  const left = longest(names) + longest(loop.map(({ kind }) => kind)) + 2 * PRESSURE + 4 * GAP.length;
   const rows = loop.map((entry, i) => [
-    `${entry.name}${entry.side === undefined ? "" : ` ${entry.side}`}`,
+    names[i],
     entry.kind,
     significant(before[i] / 1e5, 4),
     significant(behind[i] / 1e5, 4),
-    keysText(entry),
+    wrapItems(keyTexts(entry), { separator: ",", width: WIDTH - left }),
   ]);
   return [
-    title,
-    `${fluid}, ${circuit} circuit, ${flowText(flow)}; surroundings ${fixed(surroundings.temperature - 273.15, 1)} degC, ${bars(surroundings.pressure)}`,
+    wrap(title),
+    wrap(`${fluid}, ${circuit} circuit, ${flowText(flow)}; surroundings ${fixed(surroundings.temperature - 273.15, 1)} degC, ${bars(surroundings.pressure)}`),
     "",
     textTable(
       [
@@ -36,16 +42,18 @@ export function understood(definition: CycleDefinition): string {
   ].join("\n");
 }
 
+function longest(texts: readonly string[]): number {
+  return Math.max(...texts.map(({ length }) => length));
+}
+
 /** The keys that say something: all but those at their default, and the pressures in the columns beside. */
-function keysText({ kind, values }: BlockDefinition): string {
-  return (blockKind(kind)?.keys ?? [])
-    .flatMap((key) => {
-      const value = values[key.name];
-      if (value === undefined || (key.type !== "block" && value === key.default) || key.name === "outlet-pressure") return [];
-      const text = key.type === "number" ? figureText(value, { name: key.name, label: "", dimension: key.dimension }) : String(value);
-      return [`${key.name} ${text}`];
-    })
-    .join(", ");
+function keyTexts({ kind, values }: BlockDefinition): string[] {
+  return (blockKind(kind)?.keys ?? []).flatMap((key) => {
+    const value = values[key.name];
+    if (value === undefined || (key.type !== "block" && value === key.default) || key.name === "outlet-pressure") return [];
+    const text = key.type === "number" ? figureText(value, { name: key.name, label: "", dimension: key.dimension }) : String(value);
+    return [`${key.name} ${text}`];
+  });
 }
 
 function flowText(flow: Flow): string {

@@ -15,3 +15,32 @@ export function wrap(text: string, indent = "", width = WIDTH): string {
   }
   return [...lines, indent + line].join("\n");
 }
+
+/** Where a list of items is broken. */
+export interface ItemLayout {
+  /** Behind each item but the last. */
+  readonly separator: string;
+  /** Before the first item: a heading, with whatever space belongs behind it. */
+  readonly heading?: string;
+  /** Before the first item of each line after the first. */
+  readonly indent?: string;
+  readonly width?: number;
+}
+
+/** Items in lines of at most a width, broken between items only. */
+export function wrapItems(items: readonly string[], { separator, heading = "", indent = "", width = WIDTH }: ItemLayout): string {
+  const lines: string[] = [];
+  let line = heading;
+  let isEmpty = true;
+  items.forEach((item, i) => {
+    const piece = i < items.length - 1 ? item + separator : item;
+    if (!isEmpty && line.length + 1 + piece.length > width) {
+      lines.push(line);
+      line = indent + piece;
+    } else {
+      line += isEmpty ? piece : ` ${piece}`;
+    }
+    isEmpty = false;
+  });
+  return [...lines, line.trimEnd()].join("\n");
+}

@@ -9,6 +9,7 @@ import { blockFigures } from "../../src/present/figures.js";
 import { noSteadyState } from "../../src/present/no-steady-state.js";
 import { report } from "../../src/present/report.js";
 import { stationTable } from "../../src/present/stations.js";
+import { understood } from "../../src/present/understood.js";
 import { summary } from "../../src/present/summary.js";
 
 const folder = new URL("../../cycles/", import.meta.url);
@@ -125,6 +126,15 @@ describe("a block's figures", () => {
   it("are printed for every kind, from its record, with a name of any length", () => {
     for (const block of bench.blocks) expectNarrow(blockFigures([{ ...block, name: "a name that is longer than usual" }]));
     expect(blockFigures([{ name: "Z", kind: "unheard-of" }])).toBe("Z (unheard-of)");
+  });
+});
+
+describe("what check understood of a file", () => {
+  it.each(readdirSync(folder))("%s fits a terminal and names every block", (file) => {
+    const definition = readCycle(readFileSync(new URL(file, folder), "utf8"), { file });
+    const text = understood(definition);
+    expectNarrow(text);
+    for (const { name } of definition.loop) expect(text).toContain(`\n${name} `);
   });
 });
 
