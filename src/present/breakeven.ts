@@ -16,7 +16,7 @@ export function breakEvenText(answer: BreakEven): string {
   if (turns.length === 0) {
     const solved = ends.filter(({ value }) => value !== null);
     const always = solved.length === 0 ? "" : solved.every(({ met }) => met) ? ": it is met wherever there is a steady state" : ": it is met nowhere";
-    lines.push(wrap(`"${condition.text}" never turns for ${span}${answer.solved ? always : ": there is no steady state at all"}.`));
+    lines.push(wrap(`"${condition.text}" never turns for ${span}${answer.solved ? always : ": no place looked at has an answer"}.`));
   } else {
     lines.push(`"${condition.text}", looked at for ${span}:`, ...turns.map((turn) => wrap(turnText(turn, answer), "  ")));
   }

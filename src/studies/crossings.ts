@@ -66,6 +66,8 @@ export function crossings(follow: Followed, places: readonly number[]): Crossing
 
   for (let i = 1; i < scan.length; i++) between(scan[i - 1], scan[i], 0);
   for (let i = 1; i < scan.length - 1; i++) dip(scan[i - 1], scan[i], scan[i + 1]);
+  endDip(scan[0], scan[1]);
+  endDip(scan[scan.length - 1], scan[scan.length - 2]);
   return { turns: distinct(turns, tolerance), edges: edges.toSorted((a, b) => a.x - b.x), scan };
 
   function between(left: Sample, right: Sample, depth: number): void {
@@ -148,6 +150,14 @@ export function crossings(follow: Followed, places: readonly number[]): Crossing
     if (lowest === null || lowest.value === null || Math.sign(lowest.value) === sign) return;
     signChange(left, lowest, 0);
     signChange(lowest, right, 0);
+  }
+
+  /** The same beside an end of the span: there the function has to fall inwards to dip. */
+  function endDip(end: Sample, next: Sample): void {
+    const beside = sample(end.x + BESIDE * (next.x - end.x));
+    if (end.value === null || beside.value === null || Math.abs(beside.value) >= Math.abs(end.value)) return;
+    if (end.x < next.x) dip(end, beside, next);
+    else dip(next, beside, end);
   }
 
   /** The place between two nearest to zero or past it, by golden section; null where it meets a gap. */

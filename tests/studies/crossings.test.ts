@@ -1,3 +1,4 @@
+import fc from "fast-check";
 import { describe, expect, it } from "vitest";
 import { crossings } from "../../src/studies/crossings.js";
 
@@ -13,6 +14,28 @@ describe("crossings", () => {
   it("finds both roots of a dip between two scanned places", () => {
     const { turns } = crossings((x) => (x - 0.503) ** 2 - 1e-6, scan(0, 1, 10));
     expect(turns.map(({ x }) => x)).toEqual([expect.closeTo(0.502, 8), expect.closeTo(0.504, 8)]);
+  });
+
+  it("finds both roots of a dip beside an end of the span", () => {
+    for (const dip of [0.05, 0.96]) {
+      const { turns } = crossings((x) => (x - dip) ** 2 - 1e-6, scan(0, 1, 10));
+      expect(turns.map(({ x }) => x)).toEqual([expect.closeTo(dip - 1e-3, 8), expect.closeTo(dip + 1e-3, 8)]);
+    }
+  });
+
+  it("finds the roots of any polynomial that a fine grid finds", () => {
+    fc.assert(
+      fc.property(fc.array(fc.double({ min: -3, max: 3, noNaN: true }), { minLength: 1, maxLength: 5 }), (roots) => {
+        const follow = (x: number): number => roots.reduce((product, root) => product * (x - root), 1);
+        const fine = scan(-2.02, 2.03, 400);
+        const changes = fine.filter((x, i) => i > 0 && follow(x) < 0 !== follow(fine[i - 1]) < 0).length;
+        const { turns } = crossings(follow, scan(-2.02, 2.03, 60));
+        expect(turns.length).toBeGreaterThanOrEqual(changes);
+        for (const { x } of turns) expect(Math.min(...roots.map((root) => Math.abs(root - x)))).toBeLessThan(2e-3);
+        turns.forEach(({ metAbove }, i) => expect(metAbove).toBe(i % 2 === 0 ? follow(-2.02) >= 0 : follow(-2.02) < 0));
+      }),
+      { seed: 7 },
+    );
   });
 
   it("finds none where the function stays on one side", () => {
