@@ -1,4 +1,4 @@
-import fc from "fast-check";
+import { array, assert, double, property } from "fast-check";
 import { describe, expect, it } from "vitest";
 import { crossings } from "../../src/studies/crossings.js";
 
@@ -24,8 +24,8 @@ describe("crossings", () => {
   });
 
   it("finds the roots of any polynomial that a fine grid finds", () => {
-    fc.assert(
-      fc.property(fc.array(fc.double({ min: -3, max: 3, noNaN: true }), { minLength: 1, maxLength: 5 }), (roots) => {
+    assert(
+      property(array(double({ min: -3, max: 3, noNaN: true }), { minLength: 1, maxLength: 5 }), (roots) => {
         const follow = (x: number): number => roots.reduce((product, root) => product * (x - root), 1);
         const fine = scan(-2.02, 2.03, 400);
         const changes = fine.filter((x, i) => i > 0 && follow(x) < 0 !== follow(fine[i - 1]) < 0).length;
