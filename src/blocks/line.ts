@@ -1,7 +1,8 @@
 import { given } from "./definition.js";
+import { leakWarnings } from "./leak.js";
 import type { BlockKind, Port, Setting } from "./kind.js";
 import { heatLeak, pressureAfterDrop, pressureDrop } from "./shared-keys.js";
-import { surely } from "./ports.js";
+import { flash, surely } from "./ports.js";
 import type { Unit } from "./unit.js";
 
 /** A pipe or a section of the cold box. */
@@ -19,7 +20,7 @@ export const line: BlockKind = {
   place: ([port], setting) => placeLine(surely(port), setting),
 };
 
-function placeLine({ entry, inlet, outlet }: Port, { surroundings }: Setting): Unit {
+function placeLine({ entry, inlet, outlet }: Port, { fluid, surroundings }: Setting): Unit {
   const leak = given(entry, "heat-leak") ?? 0;
   return {
     name: entry.name,
@@ -29,5 +30,6 @@ function placeLine({ entry, inlet, outlet }: Port, { surroundings }: Setting): U
     },
     energyFlows: () => ({ work: 0, drive: 0, heat: [{ heat: leak, temperature: surroundings.temperature }] }),
     figures: () => ({ heatLeak: leak, pressureDrop: inlet.pressure - outlet.pressure }),
+    warnings: () => leakWarnings(entry.name, leak, flash(fluid, outlet).temperature, surroundings.temperature),
   };
 }

@@ -1,5 +1,6 @@
 import { Counterflow, type Side } from "./counterflow.js";
 import { given, type BlockDefinition } from "./definition.js";
+import { leakWarnings } from "./leak.js";
 import type { BlockKind, Port, Setting } from "./kind.js";
 import { flash, surely } from "./ports.js";
 import { heatLeak, pressureAfterDrop, pressureDrop } from "./shared-keys.js";
@@ -132,9 +133,19 @@ function placeRecuperator(warm: Port, cold: Port, { fluid, surroundings }: Setti
       heat: [{ heat: exchange.heatLeak, temperature: surroundings.temperature }],
     }),
     figures,
+    warnings: () =>
+      leakWarnings(warm.entry.name, exchange.heatLeak, flash(fluid, cold.outlet).temperature, surroundings.temperature),
     impossible() {
       const warmInlet = flash(fluid, warm.inlet).temperature;
       const coldInlet = flash(fluid, cold.inlet).temperature;
+      const coldOutlet = flash(fluid, cold.outlet).temperature;
+      if (duty === 0 && coldInlet <= warmInlet && coldOutlet > warmInlet) {
+        return {
+          quantity: "heat-leak",
+          reason: `its heat leak alone warms the cold stream to ${coldOutlet.toFixed(2)} K, above the ${warmInlet.toFixed(2)} K of the warm one: there is nothing left to exchange.`,
+          advice: "Insulate it better, or leave it out.",
+        };
+      }
       if (coldInlet <= warmInlet) return null;
       return {
         quantity: "temperature",
