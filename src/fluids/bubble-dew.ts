@@ -9,6 +9,8 @@ import { GAS_SIDE, LIQUID_SIDE, TWO_PHASE_SIDE, type PhaseBoundary, type Saturat
 
 /** Share of the end's pressure by which the highest pressure with two phases lies below it. */
 const BELOW_END = 1e-12;
+/** Bubble over dew pressure at one temperature is at most this; 2.15 where air freezes. */
+const WIDEST = 2.3;
 /** Relative distances from a curve's end between which it is searched for a first passage of the end's pressure. */
 const FAR_BEFORE_END = 0.02;
 const NEAR_END = 1e-6;
@@ -61,7 +63,9 @@ export class BubbleDewBoundary implements PhaseBoundary {
 
   side(temperature: number, pressure: number): Side {
     if (pressure >= this.criticalPressure) return LIQUID_SIDE;
-    if (pressure <= this.dew.pressure(temperature)) return GAS_SIDE;
+    const dewPressure = this.dew.pressure(temperature);
+    if (pressure <= dewPressure) return GAS_SIDE;
+    if (pressure > WIDEST * dewPressure) return LIQUID_SIDE;
     return pressure >= this.bubble.pressure(temperature) ? LIQUID_SIDE : TWO_PHASE_SIDE;
   }
 
@@ -74,7 +78,7 @@ export class BubbleDewBoundary implements PhaseBoundary {
     const liquidEntropy = equation.entropy;
     const liquidHeatCapacity = equation.isobaricHeatCapacity();
     const dewTemperature = this.dew.temperature(pressure);
-    const vapourDensity = search.gas(dewTemperature, pressure, this.vapourDensityGuess(dewTemperature));
+    const vapourDensity = search.gas(dewTemperature, pressure, this);
     equation.setState(vapourDensity);
     return {
       pressure,
@@ -100,7 +104,7 @@ export class BubbleDewBoundary implements PhaseBoundary {
   pressureInside(temperature: number, density: number): number {
     const { equation, search, criticalPressure, lowestPressure } = this;
     const dewPressure = this.dew.pressure(temperature);
-    if (density <= search.gas(temperature, dewPressure, this.vapourDensityGuess(temperature))) return NaN;
+    if (density <= search.gas(temperature, dewPressure, this)) return NaN;
     let bubblePressure = this.bubble.pressure(temperature);
     if (temperature <= this.bubble.highest) {
       if (density >= search.liquid(temperature, bubblePressure, this.liquidDensityGuess(temperature))) return NaN;

@@ -3,6 +3,7 @@ import { NoConvergenceError } from "./errors.js";
 import type { HelmholtzEquation } from "./helmholtz.js";
 import { LIQUID_SIDE, type PhaseBoundary, type Side } from "./saturation.js";
 import { ENTHALPY, type Caloric } from "./starting-points.js";
+import type { State } from "./state.js";
 
 /** Relative step of temperature and density below which a first-order correction is exact to round-off. */
 const LAST_STEP = 1e-10;
@@ -12,6 +13,8 @@ const FAST_STEPS = 14;
 const LONGEST_STEP = 0.4;
 /** Density over the critical one below which pressure is taken in logarithms, in which a gas is nearly linear. */
 const GAS_LIKE = 0.6;
+/** Relative change of pressure, temperature or density up to which an old state starts a search better than a guess. */
+const NEAR = 0.1;
 /** Steps of the bracketed search: 60 bisections exhaust double precision, the rest is margin. */
 const SAFE_STEPS = 200;
 
@@ -89,7 +92,27 @@ export class CaloricSearch {
   }
 
   /**
-   * The same, with temperature kept inside a bracket and density solved afresh at each: slow, and does not fail.
+   * Where a state would move by first order for the values given: a start for `refine`, left in `temperature` and `density`.
+   *
+   * @returns false where the state is too far away, or no state of one phase
+   */
+  predict(kind: Caloric, pressure: number, value: number, state: State): boolean {
+    const { temperature, density, isobaricHeatCapacity, isochoricHeatCapacity, speedOfSound } = state;
+    const push = pressure - state.pressure;
+    if (!(Math.abs(push) < NEAR * pressure)) return false;
+    // (dp/drho)_T = w^2 cv / cp, and (dp/dT)_rho / rho from cp - cv = T (dp/dT)^2 / (rho^2 (dp/drho)_T)
+    const byDensity = (speedOfSound * speedOfSound * isochoricHeatCapacity) / isobaricHeatCapacity;
+    const slope = Math.sqrt(((isobaricHeatCapacity - isochoricHeatCapacity) * byDensity) / temperature);
+    const heat = kind === ENTHALPY ? value - state.enthalpy - push / density : temperature * (value - state.entropy);
+    const warmer = (heat + (temperature * slope * push) / (density * byDensity)) / isobaricHeatCapacity;
+    const denser = (push - density * slope * warmer) / byDensity;
+    this.temperature = temperature + warmer;
+    this.density = density + denser;
+    return Math.abs(warmer) < NEAR * temperature && Math.abs(denser) < NEAR * density;
+  }
+
+  /**
+   * The same as `refine`, with temperature kept inside a bracket and density solved afresh at each: slow, and does not fail.
    * Enthalpy and entropy rise with temperature at constant pressure.
    *
    * @param side which phase it is, below the critical temperature
@@ -132,7 +155,7 @@ export class CaloricSearch {
     if (temperature >= this.boundary.criticalTemperature) return this.search.above(temperature, pressure);
     return side === LIQUID_SIDE
       ? this.search.liquid(temperature, pressure, this.boundary.liquidDensityGuess(temperature))
-      : this.search.gas(temperature, pressure, this.boundary.vapourDensityGuess(temperature));
+      : this.search.gas(temperature, pressure, this.boundary);
   }
 
   /** K by which temperature has to change at constant pressure, by first order. Sets the equation's state. */

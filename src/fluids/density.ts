@@ -2,6 +2,7 @@ import { CubicGuess } from "./cubic-guess.js";
 import { NoConvergenceError } from "./errors.js";
 import { criticalPoint, type FluidData } from "./fluid-data.js";
 import type { HelmholtzEquation } from "./helmholtz.js";
+import type { PhaseBoundary } from "./saturation.js";
 
 /** Relative step of density after which the next one is below round-off, Newton's steps squaring themselves. */
 const LAST_STEP = 1e-8;
@@ -20,6 +21,12 @@ const LONGEST_STEP = 0.3;
  * region, where equations of state have loops of their own.
  */
 export const SATURATION_MARGIN = 0.05;
+/**
+ * Densities over the critical one below and above which a state with rising pressure is gas or liquid for sure: the
+ * equations' loops inside the two-phase region lie between.
+ */
+export const SURELY_GAS = 0.3;
+export const SURELY_LIQUID = 1.7;
 /** Ideal-gas density over the critical one below which two virial coefficients give a better start than a cubic equation. */
 const THIN = 0.25;
 /** Pressure derivative of the bulk modulus of simple liquids: makes the first step in a liquid nearly exact. */
@@ -44,12 +51,13 @@ export class DensitySearch {
     this.cubic = new CubicGuess(temperature, pressure, equation.specificGasConstant, data.phases.guess.acentricFactor);
   }
 
-  /** The least dense root: gas, no denser than roughly the saturated vapour (kg/m3) at that temperature. */
-  gas(temperature: number, pressure: number, saturated: number): number {
+  /** The least dense root: gas, no denser than roughly the saturated vapour of the boundary. */
+  gas(temperature: number, pressure: number, boundary: Pick<PhaseBoundary, "vapourDensityGuess">): number {
     const { equation } = this;
     equation.setTemperature(temperature);
     const density = this.refine(pressure, this.virialGuess(temperature, pressure));
-    if (density <= (1 + SATURATION_MARGIN) * saturated) return density;
+    if (density <= SURELY_GAS * this.criticalDensity) return density;
+    if (density <= (1 + SATURATION_MARGIN) * boundary.vapourDensityGuess(temperature)) return density;
     return this.outermost(temperature, pressure, -1);
   }
 

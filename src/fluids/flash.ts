@@ -1,6 +1,6 @@
 import { BubbleDewBoundary } from "./bubble-dew.js";
 import { CaloricSearch } from "./caloric.js";
-import { DensitySearch, SATURATION_MARGIN } from "./density.js";
+import { DensitySearch, SATURATION_MARGIN, SURELY_GAS, SURELY_LIQUID } from "./density.js";
 import { OutOfRangeError } from "./errors.js";
 import type { FluidData } from "./fluid-data.js";
 import { HelmholtzEquation } from "./helmholtz.js";
@@ -14,8 +14,6 @@ import { writeSinglePhase, writeTwoPhase } from "./write.js";
 
 /** Pa, at which saturated liquid has zero enthalpy and entropy. */
 const ZERO_PRESSURE = 101325;
-/** Relative change of pressure or temperature up to which an old state starts a search better than a guess. */
-const NEAR = 0.1;
 /** Share of a limiting temperature that a search may end beyond it, by round-off. */
 const ROUND_OFF = 1e-9;
 
@@ -139,18 +137,13 @@ export class Flash {
 
   /** The fast search from the best start at hand; false unless it ends in the stable phase on `side`, in range. */
   private findFast(kind: Caloric, pressure: number, value: number, side: Side, saturation: Saturation | undefined, state: State): boolean {
-    const { caloric, equation, boundary } = this;
-    const change = (value - (kind === ENTHALPY ? state.enthalpy : state.entropy)) / state.isobaricHeatCapacity;
-    const ratio = pressure / state.pressure;
-    if (Math.abs(ratio - 1) < NEAR) {
-      // A gas warms by R / cp of the relative change of pressure at constant entropy, a liquid hardly.
-      const compression = side === GAS_SIDE ? (equation.specificGasConstant / state.isobaricHeatCapacity) * (ratio - 1) : 0;
-      const warmer = kind === ENTHALPY ? change / state.temperature : change + compression;
-      if (Math.abs(warmer) < NEAR && (side === GAS_SIDE) === (state.density < boundary.criticalDensity)) {
-        const temperature = state.temperature * (1 + warmer);
-        const density = side === GAS_SIDE ? (state.density * ratio) / (1 + warmer) : state.density;
-        if (caloric.refine(kind, pressure, value, temperature, density) && this.isStable(pressure, side, saturation)) return true;
-      }
+    const { caloric } = this;
+    if (
+      caloric.predict(kind, pressure, value, state) &&
+      caloric.refine(kind, pressure, value, caloric.temperature, caloric.density) &&
+      this.isStable(pressure, side, saturation)
+    ) {
+      return true;
     }
     const points = this.points();
     points.place(kind, pressure, value, side);
@@ -165,11 +158,12 @@ export class Flash {
     if (!(temperature >= minimumTemperature * (1 - ROUND_OFF) && temperature <= maximumTemperature * (1 + ROUND_OFF))) return false;
     if (pressure > this.melting.free && pressure > this.melting.pressure(temperature) * (1 + MELTING_ROUND_OFF)) return false;
     if (temperature >= boundary.criticalTemperature) return side === GAS_SIDE || pressure >= boundary.criticalPressure;
+    const share = density / boundary.criticalDensity;
     if (side === GAS_SIDE) {
-      if (density > (1 + SATURATION_MARGIN) * boundary.vapourDensityGuess(temperature)) return false;
+      if (share > SURELY_GAS && density > (1 + SATURATION_MARGIN) * boundary.vapourDensityGuess(temperature)) return false;
       if (saturation !== undefined) return temperature >= saturation.dewTemperature * (1 - ROUND_OFF);
     } else {
-      if (density < (1 - SATURATION_MARGIN) * boundary.liquidDensityGuess(temperature)) return false;
+      if (share < SURELY_LIQUID && density < (1 - SATURATION_MARGIN) * boundary.liquidDensityGuess(temperature)) return false;
       if (saturation !== undefined) return temperature <= saturation.bubbleTemperature * (1 + ROUND_OFF);
     }
     return boundary.side(temperature, pressure) === side;

@@ -57,9 +57,10 @@ export class ResidualHelmholtz {
   private readonly c0: Float64Array;
   private readonly c1: Float64Array;
   private readonly c2: Float64Array;
-  // What a coefficient adds to the first and the second power of delta in an expansion at zero density.
-  private readonly order1: Float64Array;
-  private readonly order2: Float64Array;
+  // Expansion in delta at zero density: places of the coefficients that count, and what each adds to delta and to delta^2.
+  private readonly virialPlaces: Int32Array;
+  private readonly virialFirst: Float64Array;
+  private readonly virialSecond: Float64Array;
 
   constructor({ powers, gaussians }: ResidualTerms) {
     const groups: Group[] = [];
@@ -101,16 +102,16 @@ export class ResidualHelmholtz {
     this.c0 = new Float64Array(count);
     this.c1 = new Float64Array(count);
     this.c2 = new Float64Array(count);
-    this.order1 = new Float64Array(count);
-    this.order2 = new Float64Array(count);
-    for (const group of groups) {
+    const virials = groups.flatMap((group) => {
       const atZero = Math.exp(-group.eta * group.epsilon * group.epsilon);
-      if (group.lowest === 1) {
-        this.order1[coefficient(group, 1)] = atZero;
-        this.order2[coefficient(group, 1)] = atZero * (2 * group.eta * group.epsilon - (group.l === 1 ? 1 : 0));
-      }
-      if (group.lowest <= 2 && group.highest >= 2) this.order2[coefficient(group, 2)] = atZero;
-    }
+      const slope = 2 * group.eta * group.epsilon - (group.l === 1 ? 1 : 0);
+      const ofFirst = group.lowest === 1 ? [{ place: coefficient(group, 1), first: atZero, second: atZero * slope }] : [];
+      const ofSecond = group.lowest <= 2 && group.highest >= 2 ? [{ place: coefficient(group, 2), first: 0, second: atZero }] : [];
+      return [...ofFirst, ...ofSecond];
+    });
+    this.virialPlaces = Int32Array.from(virials, ({ place }) => place);
+    this.virialFirst = Float64Array.from(virials, ({ first }) => first);
+    this.virialSecond = Float64Array.from(virials, ({ second }) => second);
   }
 
   /** Sets the temperature of the evaluations that follow. */
@@ -265,15 +266,18 @@ export class ResidualHelmholtz {
 
   /** Second virial coefficient at the current temperature, over the reducing volume. */
   secondVirial(): number {
-    let sum = 0;
-    for (let i = 0; i < this.c0.length; i++) sum += this.c0[i] * this.order1[i];
-    return sum;
+    return this.virial(this.virialFirst);
   }
 
   /** Third virial coefficient at the current temperature, over the reducing volume squared. */
   thirdVirial(): number {
+    return 2 * this.virial(this.virialSecond);
+  }
+
+  private virial(shares: Float64Array): number {
+    const { virialPlaces, c0 } = this;
     let sum = 0;
-    for (let i = 0; i < this.c0.length; i++) sum += this.c0[i] * this.order2[i];
-    return 2 * sum;
+    for (let i = 0; i < virialPlaces.length; i++) sum += shares[i] * c0[virialPlaces[i]];
+    return sum;
   }
 }

@@ -1,7 +1,10 @@
 import type { PhaseBoundary, Saturation } from "./saturation.js";
 
-/** Pressures remembered: more than the streams of a cycle and the segments of its exchangers take together. A power of two. */
-const SLOTS = 512;
+/**
+ * Pressures remembered, two to a hash: more than the streams of a cycle and the segments of its exchangers take together.
+ * A power of two.
+ */
+const SLOTS = 1024;
 /** Knuth's multiplicative hash, floor(2^32 / golden ratio), spreads pressures that differ in few bits. */
 const GOLDEN = 0x9e3779b1;
 
@@ -16,10 +19,13 @@ export class SaturationCache {
 
   /** Saturation at a pressure (Pa) between the boundary's lowest and critical ones. */
   at(pressure: number): Saturation {
-    const slot = this.slotOf(pressure);
-    const known = this.slots[slot];
-    if (known !== undefined && known.pressure === pressure) return known;
+    const known = this.known(pressure);
+    if (known !== undefined) return known;
     const solved = this.boundary.solve(pressure);
+    // The newer of the two of this hash stays.
+    const slot = this.slotOf(pressure);
+    this.pressures[slot + 1] = this.pressures[slot];
+    this.slots[slot + 1] = this.slots[slot];
     this.pressures[slot] = pressure;
     this.slots[slot] = solved;
     return solved;
@@ -28,11 +34,12 @@ export class SaturationCache {
   /** The same, but only where it is known already. */
   known(pressure: number): Saturation | undefined {
     const slot = this.slotOf(pressure);
-    return this.pressures[slot] === pressure ? this.slots[slot] : undefined;
+    if (this.pressures[slot] === pressure) return this.slots[slot];
+    return this.pressures[slot + 1] === pressure ? this.slots[slot + 1] : undefined;
   }
 
   private slotOf(pressure: number): number {
     this.double[0] = pressure;
-    return (Math.imul(this.words[0] ^ this.words[1], GOLDEN) >>> 16) & (SLOTS - 1);
+    return (Math.imul(this.words[0] ^ this.words[1], GOLDEN) >>> 16) & (SLOTS - 2);
   }
 }

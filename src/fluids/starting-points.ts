@@ -32,7 +32,7 @@ const LARGEST_DEPARTURE = 6;
 /** Lowest temperature over the critical one at which the cubic equation is asked. */
 const DENSE_LIMIT = 0.7;
 /** Steps that bring the dense start within the cubic equation's own error. */
-const DENSE_STEPS = 5;
+const DENSE_STEPS = 2;
 
 /** One caloric property, enthalpy or entropy, turned roughly into temperature. */
 interface Guesses {
