@@ -7,7 +7,7 @@ import { NoSteadyState } from "./failure.js";
 import type { Liquefaction, Station } from "./result.js";
 
 /** Efficiency to which the threshold is known. */
-const TOLERANCE = 1e-8;
+const TOLERANCE = 1e-7;
 /** Lowest efficiency considered: a wheel that only brakes the gas. */
 const LOWEST = 0.01;
 /** J/kg, a margin that stands for a machine that does not even cool to its surroundings' temperature. */
@@ -17,6 +17,12 @@ const FAR_FROM_LIQUID = 1e6;
 export interface Margin {
   readonly margin: number;
   readonly where: string;
+}
+
+/** A changed machine's margin (J/kg), and the tears at which it settled. */
+export interface Trial {
+  readonly margin: number;
+  readonly tears: Float64Array;
 }
 
 /** How far a machine's stations are from condensing. */
@@ -36,12 +42,14 @@ export function liquefactionMargin(stations: readonly Station[], fluidName: stri
  * named: the root of the margin, which is followed as a continuous quantity.
  *
  * @param margin what the machine shows as it is defined
- * @param marginOf the margin of a changed definition; throws NoSteadyState where it has none
+ * @param tears where it settled
+ * @param tryOut settles a changed definition, from the tears of a poorer expander's where given; throws NoSteadyState
  */
 export function liquefactionThreshold(
   definition: CycleDefinition,
   margin: Margin | null,
-  marginOf: (changed: CycleDefinition) => number,
+  tears: Float64Array,
+  tryOut: (changed: CycleDefinition, from: Float64Array | undefined) => Trial,
   expander?: string,
 ): Liquefaction {
   const values = efficiencies(definition, expander);
@@ -53,9 +61,14 @@ export function liquefactionThreshold(
   if (first === undefined) return answer(null, "the machine has no expander");
   if (margin === null) return answer(null, "no station lies below the critical pressure, where a gas can condense");
 
+  // A better expander settles colder: of the efficiencies tried, the best that is poorer starts the next.
+  const tried: { efficiency: number; tears: Float64Array }[] = same === null ? [] : [{ efficiency: same, tears }];
   const marginAt = (efficiency: number): number => {
+    const poorer = tried.filter((each) => each.efficiency <= efficiency).reduce<(typeof tried)[number] | undefined>((best, each) => (best === undefined || each.efficiency > best.efficiency ? each : best), undefined);
     try {
-      return marginOf(withEfficiency(definition, efficiency, expander));
+      const found = tryOut(withEfficiency(definition, efficiency, expander), poorer?.tears);
+      tried.push({ efficiency, tears: found.tears });
+      return found.margin;
     } catch (error) {
       if (!(error instanceof NoSteadyState)) throw error;
       return error.quantity === "temperature" ? -FAR_FROM_LIQUID : FAR_FROM_LIQUID;

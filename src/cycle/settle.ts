@@ -11,6 +11,19 @@ export interface Settled {
   readonly iterations: number;
   /** True where a colder steady state exists besides the one reached. */
   readonly otherSteadyStates: boolean;
+  /** J/kg, the tears' enthalpies. */
+  readonly tears: Float64Array;
+}
+
+/** How to settle. */
+export interface SettleOptions {
+  /** Whether to look for a colder steady state besides. */
+  readonly lookColder: boolean;
+  /**
+   * The tears of a machine that is like this one but cools less in every state, a poorer expander's: set out from there instead of
+   * the surroundings' temperature. Taken only if a pass lowers it, as it then must.
+   */
+  readonly from?: Float64Array | undefined;
 }
 
 /** J/kg per J/(kg K) of heat capacity, that is K: an assumed enthalpy that comes back within this has settled. */
@@ -38,27 +51,27 @@ const COLDER = [0.05, 0.2, 0.45, 0.8];
  *
  * @throws NoSteadyState with the reason
  */
-export function settle(network: Network, lookColder: boolean): Settled {
+export function settle(network: Network, { lookColder, from: nearer }: SettleOptions): Settled {
   const pass = new Pass(network);
   const size = network.tears.length;
   const start = warmStart(network);
   const change = new Float64Array(size);
   if (size === 0) {
     guarded(pass, () => pass.run(start, change));
-    return { iterations: 1, otherSteadyStates: false };
+    return { iterations: 1, otherSteadyStates: false, tears: start };
   }
-  guarded(pass, () => pass.run(start, change));
   const capacity = heatCapacity(network);
+  let from = nearer !== undefined && isUpper(pass, nearer, change, capacity) ? nearer : start;
+  if (from === start) guarded(pass, () => pass.run(start, change));
   // With several tears one may warm at first all the same: a leak into a stream that nothing cools yet.
   if (change.every((value) => value > SETTLED * capacity)) throw tooWarm(network, change);
-  let from = start;
   for (let attempt = 1; ; attempt++) {
     const x = size === 1 ? coolOneTear(pass, from, change, capacity) : coolTears(pass, from, change, capacity);
     const otherSteadyStates = lookColder && hasColder(network, pass, x, capacity);
     guarded(pass, () => pass.run(x, change));
     if (largest(change) <= SETTLED_AGAIN * SETTLED * capacity) {
       if (x.every((value, i) => value > start[i])) throw tooWarm(network, x.map((value, i) => value - start[i]));
-      return { iterations: pass.count, otherSteadyStates };
+      return { iterations: pass.count, otherSteadyStates, tears: x };
     }
     // An exchanger has found on the way that it must be summed in finer pieces, and keeps to that from now on.
     if (attempt === MOST_ATTEMPTS) throw unsettled(pass, largest(change) / capacity);
@@ -69,6 +82,17 @@ export function settle(network: Network, lookColder: boolean): Settled {
       guarded(pass, () => pass.run(from, change));
     }
   }
+}
+
+/** Whether a pass lowers a point everywhere, so that the warmest steady state lies below it; leaves the change. */
+function isUpper(pass: Pass, x: Float64Array, change: Float64Array, capacity: number): boolean {
+  try {
+    pass.run(x, change);
+  } catch (error) {
+    if (error instanceof OutOfRangeError) return false;
+    throw error;
+  }
+  return change.every((value) => value <= SETTLED * capacity);
 }
 
 /** Every tear at the surroundings' temperature, or at that of the hottest outlet that a block fixes. */

@@ -1,6 +1,6 @@
 import { assemble } from "./assemble.js";
 import type { CycleDefinition } from "./definition.js";
-import { liquefactionMargin, liquefactionThreshold } from "./liquefaction.js";
+import { liquefactionMargin, liquefactionThreshold, type Trial } from "./liquefaction.js";
 import { buildNetwork } from "./network.js";
 import type { Liquefaction, SteadyState } from "./result.js";
 import { settle } from "./settle.js";
@@ -22,23 +22,24 @@ export interface SolveOptions {
  */
 export function solve(definition: CycleDefinition, options: SolveOptions = {}): SteadyState {
   const network = buildNetwork(definition);
-  const assembled = assemble(network, settle(network, options.lookColder !== false));
+  const settled = settle(network, { lookColder: options.lookColder !== false });
+  const assembled = assemble(network, settled);
   const margin = liquefactionMargin(assembled.stations, definition.fluid);
   const liquefaction: Liquefaction =
     options.threshold === false
       ? { reached: margin !== null && margin.margin < 0, margin: margin?.margin ?? null, where: margin?.where ?? null, parameter: "", required: null, reason: "not asked for", given: null }
-      : liquefactionThreshold(definition, margin, marginOf, options.thresholdOf);
+      : liquefactionThreshold(definition, margin, settled.tears, trial, options.thresholdOf);
   return { ...assembled, liquefaction };
 }
 
-function marginOf(definition: CycleDefinition): number {
+function trial(definition: CycleDefinition, from: Float64Array | undefined): Trial {
   const network = buildNetwork(definition);
-  settle(network, false);
+  const { tears } = settle(network, { lookColder: false, from });
   const { fluid } = network.setting;
-  let least = Infinity;
+  let margin = Infinity;
   for (const { pressure, enthalpy } of network.streams) {
     if (pressure >= fluid.criticalPressure || pressure < fluid.lowestSaturationPressure) continue;
-    least = Math.min(least, enthalpy - fluid.saturation(pressure).vapourEnthalpy);
+    margin = Math.min(margin, enthalpy - fluid.saturation(pressure).vapourEnthalpy);
   }
-  return least;
+  return { margin, tears };
 }
