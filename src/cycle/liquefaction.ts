@@ -66,9 +66,9 @@ export function liquefactionThreshold(
   const marginAt = (efficiency: number): number => {
     const poorer = tried.filter((each) => each.efficiency <= efficiency).reduce<(typeof tried)[number] | undefined>((best, each) => (best === undefined || each.efficiency > best.efficiency ? each : best), undefined);
     try {
-      const found = tryOut(withEfficiency(definition, efficiency, expander), poorer?.tears);
-      tried.push({ efficiency, tears: found.tears });
-      return found.margin;
+      const trial = tryOut(withEfficiency(definition, efficiency, expander), poorer?.tears);
+      tried.push({ efficiency, tears: trial.tears });
+      return trial.margin;
     } catch (error) {
       if (!(error instanceof NoSteadyState)) throw error;
       return error.quantity === "temperature" ? -FAR_FROM_LIQUID : FAR_FROM_LIQUID;

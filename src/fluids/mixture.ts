@@ -51,7 +51,7 @@ const REFERENCE_PRESSURE = 101325;
 export class Mixture {
   /** kg/mol */
   readonly molarMass: number;
-  private readonly equilibrium: Equilibrium;
+  private readonly phases: Equilibrium;
   private readonly phase: MixturePhase;
   private readonly z: Float64Array;
   private zero = NaN;
@@ -65,7 +65,7 @@ export class Mixture {
     }
     for (let i = 0; i < this.z.length; i++) this.z[i] /= sum;
     this.molarMass = this.z.reduce((total, fraction, i) => total + fraction * COMPONENTS[i].molarMass, 0);
-    this.equilibrium = equilibrium(this.z);
+    this.phases = equilibrium(this.z);
     this.phase = new MixturePhase(COMPONENTS, airPairs);
     this.phase.x.set(this.z);
   }
@@ -129,9 +129,9 @@ export class Mixture {
   }
 
   private at(pressure: number, vapourFraction: number): Flash {
-    const { equilibrium, molarMass } = this;
-    equilibrium.solve(pressure, vapourFraction);
-    const { temperature, liquid, vapour } = equilibrium;
+    const { phases, molarMass } = this;
+    phases.solve(pressure, vapourFraction);
+    const { temperature, liquid, vapour } = phases;
     check("temperature", temperature, LOWEST_TEMPERATURE, HIGHEST_TEMPERATURE, "K");
     const enthalpy =
       ((1 - vapourFraction) * liquid.enthalpy() + vapourFraction * vapour.enthalpy()) / molarMass - this.referenceEnthalpy();

@@ -117,7 +117,7 @@ describe("a random legal machine", () => {
       }),
       { seed: 20260101, numRuns: 400, endOnFailure: true },
     );
-    console.info(`random machines: ${counts.solved} solved, ${counts.refused} refused with a reason`);
+    process.stdout.write(`random machines: ${counts.solved} solved, ${counts.refused} refused with a reason\n`);
     expect(counts.solved).toBeGreaterThan(120);
   });
 });
