@@ -140,7 +140,7 @@ function keysOf(entry: RawEntry, overridden: ReadonlyMap<string, Override> | und
   };
   for (const [name, override] of overridden) {
     const group = alternative(name);
-    for (const other of [...given.keys()]) if (group !== undefined && alternative(other) === group) given.delete(other);
+    for (const other of given.keys()) if (group !== undefined && alternative(other) === group) given.delete(other);
     given.set(name, override);
   }
   return given;
