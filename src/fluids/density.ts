@@ -13,7 +13,7 @@ const FAST_STEPS = 12;
 /** Steps of the bracketed search: 60 bisections exhaust double precision, the rest is margin. */
 const SAFE_STEPS = 200;
 /** The densest state looked at, over the critical density: denser than any fluid in range at 100 MPa. */
-const DENSEST = 6;
+const DENSEST = 4.55;
 /** Largest relative change of density in one fast step. */
 const LONGEST_STEP = 0.3;
 /**
@@ -25,8 +25,8 @@ export const SATURATION_MARGIN = 0.05;
  * Densities over the critical one below and above which a state with rising pressure is gas or liquid for sure: the
  * equations' loops inside the two-phase region lie between.
  */
-export const SURELY_GAS = 0.3;
-export const SURELY_LIQUID = 1.7;
+export const SURELY_GAS = 0.2;
+export const SURELY_LIQUID = 2;
 /** Ideal-gas density over the critical one below which two virial coefficients give a better start than a cubic equation. */
 const THIN = 0.25;
 /** Pressure derivative of the bulk modulus of simple liquids: makes the first step in a liquid nearly exact. */

@@ -102,13 +102,13 @@ export class ResidualHelmholtz {
     this.c0 = new Float64Array(count);
     this.c1 = new Float64Array(count);
     this.c2 = new Float64Array(count);
-    const virials = groups.flatMap((group) => {
+    const virials: { place: number; first: number; second: number }[] = [];
+    for (const group of groups) {
       const atZero = Math.exp(-group.eta * group.epsilon * group.epsilon);
       const slope = 2 * group.eta * group.epsilon - (group.l === 1 ? 1 : 0);
-      const ofFirst = group.lowest === 1 ? [{ place: coefficient(group, 1), first: atZero, second: atZero * slope }] : [];
-      const ofSecond = group.lowest <= 2 && group.highest >= 2 ? [{ place: coefficient(group, 2), first: 0, second: atZero }] : [];
-      return [...ofFirst, ...ofSecond];
-    });
+      if (group.lowest === 1) virials.push({ place: coefficient(group, 1), first: atZero, second: atZero * slope });
+      if (group.lowest <= 2 && group.highest >= 2) virials.push({ place: coefficient(group, 2), first: 0, second: atZero });
+    }
     this.virialPlaces = Int32Array.from(virials, ({ place }) => place);
     this.virialFirst = Float64Array.from(virials, ({ first }) => first);
     this.virialSecond = Float64Array.from(virials, ({ second }) => second);

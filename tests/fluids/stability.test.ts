@@ -1,4 +1,5 @@
 import { describe, expect, it } from "vitest";
+import { SURELY_GAS, SURELY_LIQUID } from "../../src/fluids/density.js";
 import { criticalPoint } from "../../src/fluids/fluid-data.js";
 import { Flash } from "../../src/fluids/flash.js";
 import { HelmholtzEquation } from "../../src/fluids/helmholtz.js";
@@ -7,6 +8,7 @@ import { bracketedRoot } from "../../src/fluids/root.js";
 import { State } from "../../src/fluids/state.js";
 import { expectClose } from "../tolerance.js";
 import { sequence } from "./sweep.js";
+import { referenceRows } from "./table.js";
 
 const SEED = 815;
 /** Densities between which roots of pressure are looked for. */
@@ -114,6 +116,20 @@ describe.each(pure)("phases of %s", (name, data) => {
     expectClose("critical pressure", equation.pressure, critical.pressure, 1e-9);
   });
 
+  it("near the critical point agrees with 60-digit arithmetic", () => {
+    const rows = referenceRows("near-critical", name);
+    expect(rows.length).toBe(8);
+    for (const row of rows) {
+      const where = `${name} at ${row.temperature_K} K`;
+      const pressure = gas.bubblePressure(row.temperature_K);
+      const { bubbleTemperature, liquidDensity, vapourDensity } = gas.saturation(pressure);
+      expectClose(`${where}, pressure`, pressure, row.pressure_Pa, 1e-10);
+      expectClose(`${where}, temperature`, bubbleTemperature, row.temperature_K, 1e-13);
+      expectClose(`${where}, liquid density`, liquidDensity, row.liquid_density_kg_m3, 5e-8);
+      expectClose(`${where}, vapour density`, vapourDensity, row.vapour_density_kg_m3, 5e-8);
+    }
+  });
+
   it("near the critical point the densities meet, smoothly over the change of method", () => {
     // Both densities run as the square root of the distance, the equation being analytic.
     expectClose(`${name}`, half(0.9e-7), half(1.1e-7), 1e-4);
@@ -133,6 +149,27 @@ describe.each(fluidData.map((data) => [data.name, data] as const))("starting val
       const { bubbleTemperature, dewTemperature, liquidDensity, vapourDensity } = gas.saturation(pressure);
       expectClose(`${name} at ${pressure} Pa, liquid`, boundary.liquidDensityGuess(bubbleTemperature), liquidDensity, 0.03);
       expectClose(`${name} at ${pressure} Pa, vapour`, boundary.vapourDensityGuess(dewTemperature), vapourDensity, 0.03);
+    }
+  });
+
+  it("tell gas and liquid by density where the loops inside the two-phase region are out of reach", () => {
+    const { equation } = new Flash(data);
+    const critical = criticalPoint(data);
+    for (let i = 0; i <= 60; i++) {
+      equation.setTemperature(data.range.minimumTemperature + ((critical.temperature - data.range.minimumTemperature) * i) / 60);
+      const risesAt = (share: number): number => {
+        equation.setDensity(share * critical.density);
+        return equation.pressureByDensity > 0 ? 1 : 0;
+      };
+      // From zero density up, and from high density down, pressure may stop rising once and does not rise again.
+      for (const [from, to] of [[1e-4, SURELY_GAS], [4, SURELY_LIQUID]] as const) {
+        let before = 1;
+        for (let j = 0; j <= 400; j++) {
+          const rises = risesAt(from + ((to - from) * j) / 400);
+          expect(rises, `${name} at ${equation.temperature} K, ${equation.density} kg/m3`).toBeLessThanOrEqual(before);
+          before = rises;
+        }
+      }
     }
   });
 
