@@ -121,6 +121,38 @@ describe("messages", () => {
   });
 });
 
+describe("freezing", () => {
+  it("air between bubble and dew, with a bubble point below its freezing, is out of range", () => {
+    expect(() => fluid("air").at({ temperature: 61, pressure: 4000 })).toThrow("where the liquid part freezes");
+    // The gas beside it is not.
+    expect(fluid("air").at({ temperature: 63, pressure: 4000 }).phase).toBe("gas");
+    expect(() => fluid("air").at({ temperature: 61, density: 0.3 })).toThrow(OutOfRangeError);
+  });
+
+  it("liquid under pressure is out of range where it is solid", () => {
+    // Nitrogen melts at 82.8 K under 100 MPa (Span et al. 2000), helium at 4.2 K under 14 MPa (Mills and Grilly 1955).
+    expect(() => fluid("nitrogen").at({ temperature: 75, pressure: 1e8 })).toThrow("where it freezes");
+    expect(fluid("nitrogen").at({ temperature: 83, pressure: 1e8 }).phase).toBe("liquid");
+    expect(() => fluid("helium").at({ temperature: 3, pressure: 14e6 })).toThrow("where it freezes");
+    expect(fluid("helium").at({ temperature: 4.3, pressure: 14e6 }).phase).toBe("liquid");
+    expect(fluid("nitrogen").lowestTemperature(1e8)).toBeCloseTo(81.8, 0);
+    expect(fluid("nitrogen").lowestTemperature(1e5)).toBe(63.151);
+    expect(() => fluid("nitrogen").at({ temperature: 70, density: 1000 })).toThrow(OutOfRangeError);
+  });
+});
+
+describe("saturation", () => {
+  it("is remembered by pressure, to its last digit", () => {
+    const air = fluid("air");
+    for (let i = 0; i < 3000; i++) {
+      const pressure = 1e5 + 0.25 * i;
+      expect(air.saturation(pressure).pressure).toBe(pressure);
+    }
+    expect(air.saturation(1e5)).toBe(air.saturation(1e5));
+    expect(air.saturation(1e5 + 1e-9).bubbleTemperature).toBeCloseTo(air.saturation(1e5).bubbleTemperature, 12);
+  });
+});
+
 describe("what has no meaning", () => {
   it("is null in `at`", () => {
     const wet = fluid("air").at({ pressure: 101325, quality: 0.5 });
