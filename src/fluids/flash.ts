@@ -16,7 +16,6 @@ import { writeSinglePhase, writeTwoPhase } from "./write.js";
 const ZERO_PRESSURE = 101325;
 /** Share of a limiting temperature that a search may end beyond it, by round-off. */
 const ROUND_OFF = 1e-9;
-
 /** The same of a melting pressure, which is steep in temperature. */
 const MELTING_ROUND_OFF = 1e-8;
 
@@ -30,7 +29,6 @@ export class Flash {
   readonly equation: HelmholtzEquation;
   readonly boundary: PhaseBoundary;
   readonly saturations: SaturationCache;
-
   readonly melting: MeltingLimit;
 
   private readonly search: DensitySearch;

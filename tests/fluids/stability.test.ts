@@ -138,6 +138,30 @@ describe.each(pure)("phases of %s", (name, data) => {
   });
 });
 
+describe.each(fluidData.map(({ name }) => name))("%s at its critical point", (name) => {
+  const gas = fluid(name);
+
+  it("gives whole states from every pair of inputs, down to a few units of the last digit from it", () => {
+    const next = sequence(SEED);
+    /** As often 1e-3 from it as 1e-16, on either side, sometimes not at all. */
+    const nearly = (value: number): number => (next() < 0.1 ? value : value * (1 + Math.sign(next() - 0.5) * 10 ** (-16 + 13 * next())));
+    for (let i = 0; i < 400; i++) {
+      const temperature = nearly(gas.criticalTemperature);
+      const pressure = nearly(gas.criticalPressure);
+      const state = gas.temperaturePressure(temperature, pressure, new State());
+      const where = `${name} at ${temperature} K, ${pressure} Pa`;
+      const { enthalpy, entropy } = state;
+      for (const other of [state, gas.pressureEnthalpy(pressure, enthalpy, new State()), gas.pressureEntropy(pressure, entropy, new State())]) {
+        expectClose(where, other.temperature, temperature, 1e-8);
+        expectClose(where, other.enthalpy, enthalpy, 1e-4, 1e5);
+        if (other.phase === "two-phase") continue;
+        expect(other.isobaricHeatCapacity, where).toBeGreaterThan(other.isochoricHeatCapacity);
+        expect(other.speedOfSound, where).toBeGreaterThan(0);
+      }
+    }
+  });
+});
+
 describe.each(fluidData.map((data) => [data.name, data] as const))("starting values of %s", (name, data) => {
   const { boundary } = new Flash(data);
   const gas = fluid(name);
