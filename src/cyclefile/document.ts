@@ -1,5 +1,6 @@
-import { isAlias, isMap, isNode, isPair, isScalar, isSeq, LineCounter, parseDocument, visit, type Node, type Pair, type YAMLMap } from "yaml";
+import { isMap, isNode, isScalar, isSeq, LineCounter, parseDocument, visit, type Document as YamlDocument, type Node, type YAMLMap } from "yaml";
 import { InputError, type LocatedProblem } from "./errors.js";
+import { yamlFault } from "./yaml-faults.js";
 
 /** What a problem says, without its place. */
 export interface Complaint {
@@ -7,61 +8,93 @@ export interface Complaint {
   readonly found: string;
   readonly expected: string;
   readonly suggestion?: string;
+  /** The name within a value that the problem is about, where it is only a part of it. */
+  readonly part?: string;
 }
 
-/** Characters beyond which a cycle file is taken for something else. */
-const LONGEST = 1_000_000;
+/**
+ * Characters beyond which a text is taken for something else: cycle files have a few thousand, and ill-meant text of this
+ * length is still read in half a second.
+ */
+export const LONGEST = 100_000;
+/** Anchors and aliases reported; more of them say nothing more. */
+const MOST_ALIASES = 5;
 
 /** A YAML text as a tree whose every node knows its line and column. Scalars stay the text they are written as. */
 export class Document {
   readonly root: YAMLMap;
+  /** Faults that leave the rest readable. */
+  readonly problems: LocatedProblem[] = [];
   private readonly lines = new LineCounter();
 
   /** @throws InputError where the text is no YAML map of plain values */
   constructor(
-    text: string,
+    private readonly text: string,
     readonly file: string,
   ) {
-    if (text.length > LONGEST) throw this.refusal("too-long", `a text of ${Math.round(text.length / 1e6)} MB`, "a cycle file, which has a few kB");
+    if (text.length > LONGEST) throw this.refusal("too-long", `a text of ${Math.round(text.length / 1000)} kB`, "a cycle file, which has a few kB");
     if (text.includes("\0") || text.includes("\uFFFD")) throw this.refusal("not-text", "bytes that are no text", "a cycle file in UTF-8");
-    const document = this.parse(text);
-    const problems = document.errors.map(({ code, message, pos: [at] }) =>
-      this.problemAt(at, { code: "yaml", found: yamlFault(code, message), expected: "YAML 1.2 as a cycle file uses it" }),
-    );
-    visit(document, {
-      Alias: (_key, node) => {
-        problems.push(this.problem(node, { code: "alias", found: `the alias *${node.source}`, expected: "values written out, or named under let" }));
-      },
-      Node: (_key, node) => {
-        if (!isAlias(node) && node.anchor !== undefined) {
-          problems.push(this.problem(node, { code: "alias", found: `the anchor &${node.anchor}`, expected: "values written out, or named under let" }));
-          return visit.SKIP;
-        }
-        return undefined;
-      },
-    });
-    if (problems.length > 0) throw new InputError(problems.slice(0, MOST_PROBLEMS));
-    const root = document.contents;
+    try {
+      this.root = this.read();
+    } catch (error) {
+      // Nesting deeper than the stack.
+      if (error instanceof RangeError) throw this.refusal("too-deep", "lists or maps nested hundreds deep", "a cycle file");
+      throw error;
+    }
+  }
+
+  private read(): YAMLMap {
+    const options = { lineCounter: this.lines, schema: "failsafe", prettyErrors: false, uniqueKeys: false } as const;
+    const document = parseDocument(this.text, options);
+    const [first] = document.errors;
+    // Whatever follows the first fault of form may be a consequence of it.
+    if (first !== undefined) throw new InputError([this.problemAt(first.pos[0], { code: "yaml", ...yamlFault(first) })]);
+    this.refuseAliases(document);
+    const root: unknown = document.contents;
     if (root === null || (isScalar(root) && String(root.value ?? "").trim() === "")) {
       throw this.refusal("empty", "nothing but blanks and comments", "a cycle: title, fluid, flow and loop");
     }
-    if (!isMap(root)) throw new InputError([this.problem(root, { code: "not-a-map", found: kindOf(root), expected: "keys such as fluid, flow and loop, each with a value" })]);
-    this.root = root as YAMLMap;
+    if (!isMap(root)) {
+      throw new InputError([this.problem(root, { code: "wrong-shape", found: kindOf(root), expected: "keys such as fluid, flow and loop, each with a value" })]);
+    }
+    visit(document, { Map: (_key, map) => this.checkKeys(map) });
+    return root as YAMLMap;
   }
 
-  private parse(text: string) {
-    try {
-      return parseDocument(text, { lineCounter: this.lines, schema: "failsafe", prettyErrors: false, maxAliasCount: 0 } as Parameters<typeof parseDocument>[1]);
-    } catch {
-      // Only nesting deeper than the reader's own stack gets here.
-      throw this.refusal("too-deep", "lists or maps nested thousands deep", "a cycle file");
+  /** Nodes that stand for other nodes can stand for very many of them. */
+  private refuseAliases(document: YamlDocument): void {
+    const problems: LocatedProblem[] = [];
+    visit(document, (_key, node) => {
+      if (problems.length === MOST_ALIASES) return visit.BREAK;
+      const found = nameOfAlias(node);
+      if (found !== undefined) problems.push(this.problem(node, { code: "alias", found, expected: "values written out, or named under let" }));
+      return undefined;
+    });
+    if (problems.length > 0) throw new InputError(problems);
+  }
+
+  private checkKeys(map: YAMLMap): void {
+    const seen = new Map<string, Node>();
+    for (const { key } of map.items) {
+      if (!isScalar(key)) {
+        this.problems.push(this.problem(key, { code: "wrong-shape", found: `${kindOf(key)} in place of a key`, expected: "key: value" }));
+        continue;
+      }
+      const name = String(key.value);
+      const first = seen.get(name);
+      if (first === undefined) seen.set(name, key as Node);
+      else {
+        const { line } = this.lines.linePos(first.range?.[0] ?? 0);
+        this.problems.push(this.problem(key, { code: "duplicate-key", found: `the key "${name}" a second time`, expected: `it once; it stands in line ${line} already` }));
+      }
     }
   }
 
-  /** A complaint at the start of a node. */
-  problem(node: unknown, complaint: Complaint): LocatedProblem {
-    const start = isPair(node) ? isNode(node.key) ? node.key.range?.[0] : 0 : isNode(node) ? node.range?.[0] : 0;
-    return this.problemAt(start ?? 0, complaint);
+  /** A complaint at the start of a node, or of the part of it that it is about. */
+  problem(node: unknown, { part, ...complaint }: Complaint): LocatedProblem {
+    const [start = 0, end = start] = (isNode(node) ? node.range : undefined) ?? [];
+    const within = part === undefined ? null : new RegExp(`(?<!\\w)${escaped(part)}(?!\\w)`).exec(this.text.slice(start, end));
+    return this.problemAt(start + (within?.index ?? 0), complaint);
   }
 
   private problemAt(offset: number, complaint: Complaint): LocatedProblem {
@@ -74,33 +107,41 @@ export class Document {
   }
 }
 
-/** More faults of form than this say nothing more about a file. */
-const MOST_PROBLEMS = 20;
+function nameOfAlias(node: unknown): string | undefined {
+  if (!isNode(node)) return undefined;
+  if ("source" in node && !isScalar(node)) return `the alias *${String(node.source)}`;
+  return "anchor" in node && node.anchor !== undefined ? `the anchor &${String(node.anchor)}` : undefined;
+}
 
-function yamlFault(code: string, message: string): string {
-  const [sentence = message] = message.split("\n");
-  return code === "DUPLICATE_KEY" ? "a key that stands here twice" : `a fault of form (${sentence.trim()})`;
+function escaped(text: string): string {
+  return text.replaceAll(/[.*+?^${}()|[\]\\/-]/g, "\\$&");
 }
 
 /** What a node is, in words. */
 export function kindOf(node: unknown): string {
   if (isMap(node)) return "a map of keys";
-  if (isSeq(node)) return "a list";
-  if (isScalar(node)) return `"${String(node.value)}"`;
-  return "nothing";
+  if (isSeq(node)) return node.items.length === 0 ? "an empty list" : "a list";
+  const text = textOf(node)?.trim() ?? "";
+  return text === "" ? "nothing" : `"${shortened(text)}"`;
 }
 
-/** The pairs of a map, with the text of each key. */
-export function pairsOf(map: YAMLMap): { key: string; keyNode: Node; value: unknown; pair: Pair }[] {
-  return map.items.map((pair) => ({
-    key: isScalar(pair.key) ? String(pair.key.value) : "",
-    keyNode: pair.key as Node,
-    value: pair.value,
-    pair,
-  }));
+/** Text to show in a message: one line, not too long. */
+export function shortened(text: string): string {
+  const line = text.replaceAll(/[\s\p{Cc}]+/gu, " ");
+  return line.length <= 60 ? line : `${line.slice(0, 57)}…`;
+}
+
+/** The pairs of a map, with the text of each key; of equal keys the first. */
+export function pairsOf(map: YAMLMap): { key: string; keyNode: Node; value: unknown }[] {
+  const seen = new Set<string>();
+  return map.items.flatMap(({ key, value }) => {
+    if (!isScalar(key)) return [];
+    const name = String(key.value);
+    return seen.has(name) || !seen.add(name) ? [] : [{ key: name, keyNode: key as Node, value }];
+  });
 }
 
 /** The text of a scalar; undefined for anything else. */
 export function textOf(node: unknown): string | undefined {
-  return isScalar(node) && node.value !== null ? String(node.value) : undefined;
+  return isScalar(node) ? String(node.value ?? "") : undefined;
 }

@@ -1,195 +1,164 @@
-import {
-  absDependencies,
-  addDependencies,
-  create,
-  createUnitDependencies,
-  divideDependencies,
-  expDependencies,
-  logDependencies,
-  maxDependencies,
-  minDependencies,
-  multiplyDependencies,
-  parseDependencies,
-  powDependencies,
-  sqrtDependencies,
-  subtractDependencies,
-  unaryMinusDependencies,
-  unaryPlusDependencies,
-  unitDependencies,
-  type MathNode,
-  type MathType,
-  type Unit as MathUnit,
-} from "mathjs";
+import type { EvalFunction, MathNode, MathType, OperatorNode, SymbolNode, Unit as MathUnit } from "mathjs";
+import { shortened, type Complaint } from "./document.js";
+import { math, MINUTE, SI_UNIT, unitValues } from "./mathjs.js";
+import { nearest, suggested } from "./nearest.js";
 import type { Quantity } from "./quantity.js";
-import { units, type UnitKind } from "./units.js";
+import { scaleOf, scaleUnit, SumOfPoints } from "./scale.js";
+import { units, type Unit, type UnitKind } from "./units.js";
+import { unknownName, type Scope } from "./values.js";
+import { FUNCTIONS } from "./vocabulary.js";
 
-/** An expression that cannot be evaluated. */
-export class ExpressionError extends Error {
-  constructor(
-    readonly code: "expression-syntax" | "expression-refused" | "unknown-name" | "expression-units",
-    readonly found: string,
-    readonly expected: string,
-    readonly unknown?: string,
-  ) {
-    super(found);
+const OPERATORS = new Set(["+", "-", "*", "/", "^"]);
+/** The surroundings' pressure within an expression; no user can write the name. */
+const GAUGE_ZERO = "gauge zero";
+/** Expressions kept compiled; a sweep over an expression would otherwise fill the memory. */
+const MOST_COMPILED = 500;
+
+/** An expression ready to be evaluated with any values of its names. */
+interface Compiled {
+  readonly tree: MathNode;
+  readonly code: EvalFunction;
+  /** Names that are no unit's. */
+  readonly names: readonly string[];
+  readonly gauge: boolean;
+}
+
+class Refused extends Error {
+  constructor(readonly complaint: Complaint) {
+    super(complaint.found);
   }
 }
 
-/** Names and values that an expression may use. */
-export type Scope = ReadonlyMap<string, Quantity>;
-
-/** Functions of numbers and quantities that an expression may call. */
-const FUNCTIONS = new Set(["sqrt", "abs", "exp", "log", "min", "max"]);
-const OPERATORS = new Set(["+", "-", "*", "/", "^"]);
-const PERCENTAGE = /(\d+\.?\d*(?:[eE][+-]?\d+)?|\.\d+)\s*%/g;
-
-const math = create({
-  absDependencies,
-  addDependencies,
-  createUnitDependencies,
-  divideDependencies,
-  expDependencies,
-  logDependencies,
-  maxDependencies,
-  minDependencies,
-  multiplyDependencies,
-  parseDependencies,
-  powDependencies,
-  sqrtDependencies,
-  subtractDependencies,
-  unaryMinusDependencies,
-  unaryPlusDependencies,
-  unitDependencies,
-});
-
-// Gas volumes at different reference states do not convert into one another.
-math.createUnit("normalcubicmetre");
-math.createUnit("standardcubicmetre");
-
-/** The unit in which the SI value of each kind is read. */
-const SI_UNIT: Readonly<Record<Exclude<UnitKind, "fraction">, string>> = {
-  temperature: "K",
-  pressure: "Pa",
-  "mass flow": "kg / s",
-  "molar flow": "mol / s",
-  "normal volume flow": "normalcubicmetre / s",
-  "standard volume flow": "standardcubicmetre / s",
-  "volume flow": "m^3 / s",
-  power: "W",
-  conductance: "W / K",
-  volume: "m^3",
-  length: "m",
-  "specific enthalpy": "J / kg",
-  "specific entropy": "J / kg / K",
-  density: "kg / m^3",
-};
-
-/** What the compound names of the unit table are made of: number and SI unit. */
-const ATOMS: Readonly<Record<string, readonly [number, string]>> = {
-  kg: [1, "kg"],
-  g: [1e-3, "kg"],
-  lb: [0.45359237, "kg"],
-  s: [1, "s"],
-  min: [60, "s"],
-  h: [3600, "s"],
-  mol: [1, "mol"],
-  kmol: [1e3, "mol"],
-  J: [1, "J"],
-  kJ: [1e3, "J"],
-  Nm3: [1, "normalcubicmetre"],
-  NL: [1e-3, "normalcubicmetre"],
-};
-
-/** Names that stand for a value in an expression: the atoms, and the simple units of the table. */
-const values = new Map<string, MathType>([["pi", Math.PI]]);
-for (const [name, [factor, unit]] of Object.entries(ATOMS)) values.set(name, math.unit(factor, unit));
-for (const [name, { kind, factor, offset, gauge }] of Object.entries(units)) {
-  if (kind === "fraction" || !/^\w+$/.test(name) || offset !== undefined || gauge !== undefined) continue;
-  values.set(name, math.unit(factor, SI_UNIT[kind]));
-}
-/** Every name of a unit that an expression may hold. */
-export const expressionUnits: readonly string[] = [...values.keys(), ...Object.keys(units).filter((name) => /^\w+$/.test(name))];
+const compiled = new Map<string, Compiled | Complaint>();
 
 /**
- * Evaluates an expression of numbers, units and names, by mathjs without anything but arithmetic: an expression cannot
- * define, assign, index, or reach an object.
- *
- * @param surroundingsPressure Pa, the zero of gauge units
- * @throws ExpressionError
+ * Evaluates an expression of numbers, units and names by mathjs, without anything but arithmetic: an expression cannot define,
+ * assign, index, or reach an object. Temperatures and gauge pressures are taken from absolute zero before anything is done to them.
  */
-export function evaluateExpression(text: string, scope: Scope, surroundingsPressure: number): Quantity {
-  const tree = checked(parsed(text), scope, surroundingsPressure);
-  const names = new Map<string, MathType>(values);
-  // The function min would hide the minute.
-  names.set("minute", values.get("min") as MathType);
-  names.delete("min");
-  for (const [name, quantity] of scope) {
-    names.set(name, quantity.kind === "fraction" ? quantity.value : math.unit(quantity.value, SI_UNIT[quantity.kind]));
+export function evaluateExpression(text: string, scope: Scope): Quantity | Complaint | null {
+  let expression = compiled.get(text);
+  if (expression === undefined) {
+    expression = compile(text);
+    if (compiled.size >= MOST_COMPILED) compiled.clear();
+    compiled.set(text, expression);
+  }
+  return "found" in expression ? expression : evaluate(text, expression, scope);
+}
+
+function evaluate(text: string, { tree, code, names, gauge }: Compiled, scope: Scope): Quantity | Complaint | null {
+  const quantities = new Map<string, Quantity>();
+  const values = new Map<string, MathType>(unitValues);
+  for (const name of names) {
+    const quantity = scope.get(name);
+    if (quantity === null) return null;
+    if (quantity === undefined) return unknown(name, scope);
+    quantities.set(name, quantity);
+    values.set(name, quantity.kind === "fraction" ? quantity.value : math.unit(quantity.value, SI_UNIT[quantity.kind]));
+  }
+  if (gauge) {
+    const zero = scope.surroundingsPressure();
+    if (Number.isNaN(zero)) return null;
+    values.set(GAUGE_ZERO, zero);
   }
   let result: unknown;
+  let scale: Quantity["scale"];
   try {
-    result = tree.compile().evaluate(names);
+    scale = scaleOf(tree, (name) => quantities.get(name));
+    result = code.evaluate(values);
   } catch (error) {
-    const reason = error instanceof Error ? error.message : String(error);
-    throw new ExpressionError("expression-units", `"${text}", in which the units do not go together (${reason})`, "quantities of one kind to be added, and plain numbers in functions");
+    if (error instanceof SumOfPoints) {
+      return { code: "expression-units", found: `"${shortened(text)}", two places on a scale added`, expected: "a difference to be added, in K or in an absolute unit of pressure, as in 22 degC + 5 K" };
+    }
+    return { code: "expression-units", found: `"${shortened(text)}", in which the units do not go together`, expected: "quantities of one kind to be added, and plain numbers in functions and exponents" };
   }
-  if (typeof result === "number") return { value: finite(result, text), kind: "fraction" };
+  return quantityFrom(result, scale) ?? { code: "expression-units", found: `"${shortened(text)}", which is no finite value of a kind that a cycle file uses`, expected: "a number, or a quantity such as a pressure, a temperature or a flow" };
+}
+
+function quantityFrom(result: unknown, scale: Quantity["scale"]): Quantity | undefined {
+  if (typeof result === "number") return Number.isFinite(result) ? { value: result, kind: "fraction" } : undefined;
+  const quantity = result as MathUnit;
   for (const [kind, unit] of Object.entries(SI_UNIT) as [Exclude<UnitKind, "fraction">, string][]) {
-    const quantity = result as MathUnit;
-    if (math.unit(1, unit).equalBase(quantity)) return { value: finite(quantity.toNumber(unit), text), kind };
+    if (!math.isUnit(quantity) || !kindUnit(kind, unit).equalBase(quantity)) continue;
+    const value = quantity.toNumber(unit);
+    if (!Number.isFinite(value)) return undefined;
+    return scale === undefined || (kind !== "temperature" && kind !== "pressure") ? { value, kind } : { value, kind, scale };
   }
-  throw new ExpressionError("expression-units", `"${text}", whose unit is none that a cycle file uses`, "a number, or a quantity such as a pressure, a temperature or a flow");
+  return undefined;
 }
 
-function parsed(text: string): MathNode {
+const kindUnits = new Map<UnitKind, MathUnit>();
+function kindUnit(kind: UnitKind, unit: string): MathUnit {
+  const known = kindUnits.get(kind) ?? math.unit(1, unit);
+  kindUnits.set(kind, known);
+  return known;
+}
+
+function compile(text: string): Compiled | Complaint {
   try {
-    return math.parse(text.replace(PERCENTAGE, "($1/100)"));
+    const tree = parse(text);
+    const names = new Set<string>();
+    let gauge = false;
+    const check = (node: MathNode, path: string | null): MathNode => {
+      const scale = scaleUnit(node);
+      if (scale === undefined) return checked(node, path, names);
+      gauge ||= scale.unit.gauge === true;
+      // What has been replaced is not looked into any more.
+      return fromZero((node as OperatorNode).args[0].transform(check), scale.unit);
+    };
+    const arithmetic = tree.transform(check);
+    return { tree, code: arithmetic.compile(), names: [...names], gauge };
   } catch (error) {
-    const reason = error instanceof Error ? error.message : String(error);
-    throw new ExpressionError("expression-syntax", `"${text}", which cannot be read (${reason})`, "a value such as 8 bar, 62 % or p_high - 0.2 bar");
+    if (error instanceof Refused) return error.complaint;
+    throw error;
   }
 }
 
-/** The tree with scales that have a zero of their own turned into plain quantities; refuses all that is not arithmetic. */
-function checked(tree: MathNode, scope: Scope, surroundingsPressure: number): MathNode {
-  return tree.transform((node, path) => {
-    const refuse = (what: string): never => {
-      throw new ExpressionError("expression-refused", what, `numbers, units, names, + - * / ^ and ${[...FUNCTIONS].join(", ")}`);
-    };
-    if (math.isConstantNode(node)) return typeof node.value === "number" ? node : refuse(`the value ${JSON.stringify(node.value)}`);
-    if (math.isParenthesisNode(node)) return node;
-    if (math.isFunctionNode(node)) {
-      const name = math.isSymbolNode(node.fn) ? node.fn.name : "";
-      return FUNCTIONS.has(name) ? node : refuse(`a call of "${name === "" ? node.toString() : name}"`);
-    }
-    if (math.isOperatorNode(node)) {
-      if (!OPERATORS.has(node.op)) return refuse(`the operator "${node.op}"`);
-      const [number, scale] = node.args;
-      if (node.implicit && scale !== undefined && math.isSymbolNode(scale) && !scope.has(scale.name)) {
-        const unit = Object.hasOwn(units, scale.name) ? units[scale.name] : undefined;
-        const zero = (unit?.offset ?? 0) + (unit?.gauge === true ? surroundingsPressure : 0);
-        if (unit !== undefined && (unit.offset !== undefined || unit.gauge !== undefined)) {
-          const { OperatorNode, ConstantNode, SymbolNode, ParenthesisNode } = math;
-          const scaled = new OperatorNode("*", "multiply", [number, new ConstantNode(unit.factor)]);
-          const sum = new ParenthesisNode(new OperatorNode("+", "add", [scaled, new ConstantNode(zero)]));
-          return new OperatorNode("*", "multiply", [sum, new SymbolNode(unit.kind === "pressure" ? "Pa" : "K")]);
-        }
-      }
-      return node;
-    }
-    if (math.isSymbolNode(node)) {
-      const { name } = node;
-      if (path === "fn") return node;
-      if (name === "min" && !scope.has("min")) return new math.SymbolNode("minute");
-      if (scope.has(name) || values.has(name) || name === "minute") return node;
-      if (Object.hasOwn(units, name)) return refuse(`"${name}" without a number before it`);
-      throw new ExpressionError("unknown-name", `the unknown name "${name}"`, "a name from let, or a unit", name);
-    }
-    return refuse(`"${node.toString()}"`);
-  });
+function parse(text: string): MathNode {
+  try {
+    return math.parse(text);
+  } catch (error) {
+    const reason = error instanceof Error ? error.message.replace(/ \(char \d+\)$/, "") : "";
+    throw new Refused({ code: "expression-syntax", found: `"${shortened(text)}", which cannot be read (${shortened(reason)})`, expected: "a value such as 8 bar, 62 % or p_high - 0.2 bar" });
+  }
 }
 
-function finite(value: number, text: string): number {
-  if (Number.isFinite(value)) return value;
-  throw new ExpressionError("expression-units", `"${text}", which has no finite value`, "a finite number");
+/** A number of a unit with a zero of its own, counted from absolute zero: 22 degC as (22 * 1 + 273.15) K. */
+function fromZero(number: MathNode, { kind, factor, offset = 0, gauge }: Unit): MathNode {
+  const { ConstantNode, OperatorNode, ParenthesisNode, SymbolNode } = math;
+  const zero = gauge === true ? new SymbolNode(GAUGE_ZERO) : new ConstantNode(offset);
+  const scaled = new OperatorNode("*", "multiply", [number, new ConstantNode(factor)]);
+  const sum = new ParenthesisNode(new OperatorNode("+", "add", [scaled, zero]));
+  return new OperatorNode("*", "multiply", [sum, new SymbolNode(kind === "pressure" ? "Pa" : "K")]);
+}
+
+/** A node that is arithmetic, with the minute told from the function min; anything else is refused. */
+function checked(node: MathNode, path: string | null, names: Set<string>): MathNode {
+  const refuse = (what: string, part?: string): never => {
+    throw new Refused({ code: "expression-refused", found: what, expected: `numbers, units, names, + - * / ^ and ${FUNCTIONS.join(", ")}`, ...(part === undefined ? {} : { part }) });
+  };
+  if (math.isConstantNode(node)) return typeof node.value === "number" ? node : refuse(`the value ${shortened(String(node.value))}`);
+  if (math.isParenthesisNode(node)) return node;
+  if (math.isFunctionNode(node)) {
+    const called: MathNode = node.fn;
+    const name = math.isSymbolNode(called) ? called.name : String(called);
+    return FUNCTIONS.includes(name) ? node : refuse(`a call of "${shortened(name)}"`, name);
+  }
+  if (math.isOperatorNode(node)) {
+    return OPERATORS.has(node.op) ? node : refuse(`the operator "${node.op}"`);
+  }
+  if (!math.isSymbolNode(node)) return refuse(`"${shortened(String(node))}"`);
+  if (path === "fn") return node;
+  const { name } = node as SymbolNode;
+  if (name === "min") return new math.SymbolNode(MINUTE);
+  if (unitValues.has(name)) return node;
+  if (Object.hasOwn(units, name)) return refuse(`"${name}" without a number before it`, name);
+  if (FUNCTIONS.includes(name)) return refuse(`"${name}" without what it is to be taken of`, name);
+  names.add(name);
+  return node;
+}
+
+function unknown(name: string, scope: Scope): Complaint {
+  const complaint = unknownName(name, scope.names());
+  if (complaint.suggestion !== undefined) return complaint;
+  return { ...complaint, ...suggested(nearest(name, [...unitValues.keys(), ...Object.keys(units).filter((unit) => /^\w+$/.test(unit))])) };
 }

@@ -1,5 +1,5 @@
 import type { CycleDefinition } from "../cycle/definition.js";
-import type { Override } from "./define.js";
+import type { Override } from "./override.js";
 import { evaluateExpression } from "./expression.js";
 import { openCycleFile } from "./open.js";
 

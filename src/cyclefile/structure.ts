@@ -1,56 +1,59 @@
+import { blockKinds } from "../blocks/registry.js";
 import type { Document } from "./document.js";
 import type { LocatedProblem } from "./errors.js";
-import type { RawEntry, RawFile } from "./raw.js";
+import { entriesOf, type RawEntry, type RawFile } from "./raw.js";
 
 /** Faults of the loop's make-up that show before any value is read: names, sides, and a compressor that there must be. */
 export function structureProblems(document: Document, raw: RawFile): LocatedProblem[] {
   const problems: LocatedProblem[] = [];
-  const all = [...raw.loop, ...[...raw.branches.values()].flat()];
-  const byName = new Map<string, RawEntry[]>();
-  for (const entry of all) {
-    if (entry.name === "") continue;
-    byName.set(entry.name, [...(byName.get(entry.name) ?? []), entry]);
-  }
-  for (const [name, entries] of byName) {
+  const complain = (node: unknown, code: string, found: string, expected: string): void => {
+    problems.push(document.problem(node, { code, found, expected }));
+  };
+  const all = entriesOf(raw);
+  for (const [name, entries] of byName(all)) {
     const [first] = entries;
     const { kind } = first;
-    const other = entries.find((entry) => entry.kind !== kind);
-    if (other !== undefined) {
-      problems.push(
-        document.problem(other.node, { code: "name-taken", found: `the name ${name} for a ${other.kind.kind}`, expected: `another name: ${name} is a ${kind.kind} already` }),
-      );
-      continue;
+    const same = entries.filter((entry) => entry.kind === kind);
+    for (const other of entries.filter((entry) => entry.kind !== kind)) {
+      complain(other.node, "name-taken", `the name ${name} for a ${other.kind.kind}`, `another name: ${name} is a ${kind.kind} already`);
     }
     if (kind.sides === undefined) {
-      for (const again of entries.slice(1)) {
-        problems.push(document.problem(again.node, { code: "name-taken", found: `a second ${kind.kind} ${name}`, expected: "a name of its own for each block" }));
-      }
+      for (const again of same.slice(1)) complain(again.node, "name-taken", `a second ${kind.kind} ${name}`, "a name of its own for each block");
       continue;
     }
-    const allowed = kind.sides.length;
-    for (const again of entries.slice(allowed)) {
-      problems.push(
-        document.problem(again.node, {
-          code: "used-too-often",
-          found: `${kind.kind} ${name} for the ${ordinal(entries.indexOf(again) + 1)} time`,
-          expected: `it in the loop ${allowed === 2 ? "twice" : `${allowed} times`}, once a side; more streams are two exchangers of their own`,
-        }),
-      );
-    }
-    const within = entries.slice(0, allowed);
-    for (const side of kind.sides) {
-      const standing = within.filter((entry) => entry.side === side);
-      if (standing.length > 1) {
-        problems.push(document.problem(standing[1].node, { code: "side-twice", found: `the ${side} side of ${kind.kind} ${name} for the second time`, expected: `each of ${kind.sides.join(" and ")} once` }));
-      } else if (standing.length === 0 && within.every((entry) => entry.side !== undefined && kind.sides?.includes(entry.side)) && within.length < allowed) {
-        problems.push(document.problem(first.node, { code: "side-missing", found: `${kind.kind} ${name} without its ${side} side`, expected: `it in the loop once a side: ${kind.sides.join(" and ")}` }));
+    const sides: readonly string[] = kind.sides;
+    if (same.some(({ side }) => side === undefined || !sides.includes(side))) continue;
+    const standing = new Set<string | undefined>();
+    same.forEach((entry, i) => {
+      if (i >= sides.length) {
+        complain(entry.node, "used-too-often", `${kind.kind} ${name} for the ${ordinal(i + 1)} time`, `it in the loop ${sides.length === 2 ? "twice" : `${sides.length} times`}, once a side; another pair of streams is another ${kind.kind}`);
+      } else if (standing.has(entry.side)) {
+        complain(entry.node, "side-twice", `the ${entry.side} side of ${kind.kind} ${name} for the second time`, `each of ${sides.join(" and ")} once`);
       }
+      standing.add(entry.side);
+    });
+    // In a loop with an entry that could not be made out, that entry may be the other side.
+    if (!raw.whole || same.length >= sides.length) continue;
+    for (const side of sides.filter((each) => !standing.has(each))) {
+      complain(first.node, "side-missing", `${kind.kind} ${name} without its ${side} side`, `it in the loop twice, once a side: ${sides.join(" and ")}`);
     }
   }
-  if (!all.some(({ kind }) => kind.pressureChange === "rises")) {
-    problems.push(document.problem(raw.loopNode, { code: "no-compressor", found: "a loop without a compressor", expected: "a block that raises the pressure" }));
+  if (raw.whole && !all.some(({ kind }) => kind.pressureChange === "rises")) {
+    const kinds = blockKinds.filter(({ pressureChange }) => pressureChange === "rises").map(({ kind }) => kind);
+    complain(raw.placeOf("loop"), "no-compressor", `a loop without a ${kinds[0]}`, `a block that raises the pressure: ${kinds.join(", ")}`);
   }
   return problems;
+}
+
+function byName(entries: readonly RawEntry[]): Map<string, [RawEntry, ...RawEntry[]]> {
+  const groups = new Map<string, [RawEntry, ...RawEntry[]]>();
+  for (const entry of entries) {
+    if (entry.name === "") continue;
+    const group = groups.get(entry.name);
+    if (group === undefined) groups.set(entry.name, [entry]);
+    else group.push(entry);
+  }
+  return groups;
 }
 
 function ordinal(count: number): string {

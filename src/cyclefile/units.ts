@@ -93,8 +93,6 @@ export const units: Readonly<Record<string, Unit>> = {
   m: { kind: "length", factor: 1 },
   cm: { kind: "length", factor: 1e-2 },
   mm: { kind: "length", factor: 1e-3 },
-  um: { kind: "length", factor: 1e-6 },
-  in: { kind: "length", factor: 0.0254 },
 
   "J/kg": { kind: "specific enthalpy", factor: 1 },
   "kJ/kg": { kind: "specific enthalpy", factor: 1e3 },
