@@ -58,10 +58,12 @@ export const compressor: BlockKind = {
     },
     efficiencyKey("drive-efficiency", "shaft power over the power that the motor takes", { default: 1 }),
   ],
-  alternatives: [{ name: "pressure" }, { name: "efficiency" }],
+  alternatives: [{ name: "pressure", optional: true }, { name: "efficiency" }],
+  mayFloat: true,
   figures: [
     { name: "power", label: "power into the gas", dimension: "power" },
     { name: "drivePower", label: "power the motor takes", dimension: "power" },
+    { name: "recoveredPower", label: "power from expanders", dimension: "power" },
     { name: "pressureRatio", label: "pressure ratio", dimension: "none" },
     { name: "stagePressureRatio", label: "ratio of each stage", dimension: "none" },
     { name: "dischargeTemperature", label: "hottest discharge", dimension: "temperature" },
@@ -73,13 +75,14 @@ export const compressor: BlockKind = {
   pressureChange: "rises",
   outletPressure(entry, inletPressure) {
     const outlet = given(entry, "outlet-pressure");
-    if (outlet !== undefined || inletPressure === undefined) return outlet;
-    return inletPressure * (given(entry, "pressure-ratio") ?? NaN);
+    const ratio = given(entry, "pressure-ratio");
+    if (outlet !== undefined || inletPressure === undefined || ratio === undefined) return outlet;
+    return inletPressure * ratio;
   },
   place: ([port], setting) => placeCompressor(surely(port), setting),
 };
 
-function checkCompressor([entry]: readonly BlockDefinition[], { surroundings }: Omit<Setting, "fluid">): Problem[] {
+function checkCompressor([entry]: readonly BlockDefinition[], { surroundings }: Pick<Setting, "surroundings">): Problem[] {
   const definition = surely(entry);
   const problems: Problem[] = [];
   const intercoolTo = given(definition, "intercool-to");
@@ -108,21 +111,23 @@ function checkCompressor([entry]: readonly BlockDefinition[], { surroundings }: 
   return problems;
 }
 
-function placeCompressor({ entry, inlet, outlet }: Port, { fluid, surroundings }: Setting): Unit {
+function placeCompressor({ entry, inlet, outlet }: Port, setting: Setting): Unit {
+  const { fluid, surroundings } = setting;
   const stages = given(entry, "stages") ?? 1;
   const intercoolTo = given(entry, "intercool-to");
   const intercoolerDrop = given(entry, "intercooler-pressure-drop") ?? 0;
   const driveEfficiency = given(entry, "drive-efficiency") ?? 1;
-  const ratio = stageRatio(inlet.pressure, outlet.pressure, stages, intercoolerDrop);
   const compress: Compression = compression(entry, fluid, surroundings.temperature);
   const discharges = new Float64Array(stages);
   /** J/kg into the gas, and J/kg rejected by jacket and intercoolers, as of the last evaluation. */
   let work = 0;
   let rejected = 0;
+  let ratio = NaN;
 
   function evaluate(): void {
     let pressure = inlet.pressure;
     let enthalpy = inlet.enthalpy;
+    ratio = stageRatio(inlet.pressure, outlet.pressure, stages, intercoolerDrop);
     work = 0;
     rejected = 0;
     for (let stage = 0; stage < stages; stage++) {
@@ -144,27 +149,40 @@ function placeCompressor({ entry, inlet, outlet }: Port, { fluid, surroundings }
     outlet.enthalpy = enthalpy;
   }
 
+  // Against the work of a machine that is not cooled, one that is would seem better than perfect.
+  const isCooled = intercoolTo !== undefined || given(entry, "isothermal-efficiency") !== undefined;
+  /** J/kg of a loss-free compression from inlet to outlet. */
+  const isentropicWork = (): number => {
+    const { entropy } = fluid.pressureEnthalpy(inlet.pressure, inlet.enthalpy, inlet.state);
+    return fluid.pressureEntropy(outlet.pressure, entropy, outlet.state).enthalpy - inlet.enthalpy;
+  };
+  /** W from expanders on the shaft, no more than the gas takes. */
+  const recovered = (): number => Math.min(setting.shaftPowerInto(entry.name), inlet.massFlow * work);
+  /** W that the motor takes for the rest. */
+  const motorPower = (): number => (inlet.massFlow * work - recovered()) / driveEfficiency;
+
   return {
     name: entry.name,
     kind: entry.kind,
     evaluate,
     energyFlows: () => ({
       work: inlet.massFlow * work,
-      drive: (inlet.massFlow * work) / driveEfficiency,
+      drive: motorPower(),
+      recovered: recovered(),
+      lostIn: "drive",
       heat: [{ heat: -inlet.massFlow * rejected, temperature: surroundings.temperature }],
     }),
     figures() {
-      const before = fluid.pressureEnthalpy(inlet.pressure, inlet.enthalpy, inlet.state);
-      const ideal = fluid.pressureEntropy(outlet.pressure, before.entropy, outlet.state).enthalpy - inlet.enthalpy;
       return {
         power: inlet.massFlow * work,
-        drivePower: (inlet.massFlow * work) / driveEfficiency,
+        drivePower: motorPower(),
+        recoveredPower: recovered(),
         pressureRatio: outlet.pressure / inlet.pressure,
         stagePressureRatio: ratio,
         dischargeTemperature: Math.max(...discharges),
         stageDischargeTemperatures: Array.from(discharges),
         heatRejected: inlet.massFlow * rejected,
-        isentropicEfficiency: ideal / work,
+        isentropicEfficiency: isCooled ? undefined : isentropicWork() / work,
       };
     },
   };

@@ -83,7 +83,9 @@ export class Counterflow {
     const coldInlet = this.coldTemperature(0, 1);
     if (!(warmInlet - approach > coldInlet)) return 0;
     const coldOutlet = fluid.temperaturePressure(warmInlet - approach, cold.outletPressure, this.coldState).enthalpy;
-    const warmOutlet = fluid.temperaturePressure(coldInlet + approach, warm.outletPressure, this.warmState).enthalpy;
+    // A cold stream colder than the warm one's freezing point sets no limit of its own: the warm end will.
+    const coldestOutlet = Math.max(coldInlet + approach, fluid.lowestTemperature(warm.outletPressure));
+    const warmOutlet = fluid.temperaturePressure(coldestOutlet, warm.outletPressure, this.warmState).enthalpy;
     const warmEndAllows = cold.massFlow * (coldOutlet - cold.enthalpy) - this.heatLeak;
     const coldEndAllows = warm.massFlow * (warm.enthalpy - warmOutlet);
     const endsAllow = Math.min(warmEndAllows, coldEndAllows);

@@ -48,6 +48,7 @@ export const expander: BlockKind = {
       default: 0,
     },
     efficiencyKey("mechanical-efficiency", "power at the shaft over power out of the gas", { default: 1 }),
+    { type: "block", name: "drives", kind: "compressor", help: "the compressor on its shaft; one without an outlet pressure gets what the power allows" },
   ],
   alternatives: [{ name: "pressure" }],
   figures: [
@@ -61,6 +62,7 @@ export const expander: BlockKind = {
     { name: "isentropicEnthalpyDrop", label: "isentropic enthalpy drop", dimension: "specific enthalpy" },
   ],
   liquefactionKey: "efficiency",
+  drivesKey: "drives",
   check: checkExpander,
   pressureChange: "falls",
   outletPressure(entry, inletPressure) {
@@ -83,13 +85,15 @@ function placeExpander({ entry, inlet, outlet }: Port, { fluid }: Setting): Unit
   // What leaks past the wheel keeps its enthalpy, so the mixture behind it has lost that much less.
   const expanded = required(entry, "efficiency") * (1 - (given(entry, "seal-leak") ?? 0));
   const mechanicalEfficiency = given(entry, "mechanical-efficiency") ?? 1;
-  const ratio = (inlet.pressure / outlet.pressure) ** (1 / stages);
+  const drives = typeof entry.values.drives === "string";
+  const stageRatio = (): number => (inlet.pressure / outlet.pressure) ** (1 / stages);
   const scratch = new State();
   const power = (): number => inlet.massFlow * (inlet.enthalpy - outlet.enthalpy);
   return {
     name: entry.name,
     kind: entry.kind,
     evaluate() {
+      const ratio = stageRatio();
       let pressure = inlet.pressure;
       let enthalpy = inlet.enthalpy;
       let state = inlet.state;
@@ -103,7 +107,8 @@ function placeExpander({ entry, inlet, outlet }: Port, { fluid }: Setting): Unit
       }
       outlet.enthalpy = enthalpy;
     },
-    energyFlows: () => ({ work: -power(), drive: 0, heat: [] }),
+    energyFlows: () => ({ work: -power(), drive: 0, heat: [], delivered: drives ? power() * mechanicalEfficiency : 0, lostIn: drives ? "bearings" : "brake" }),
+    shaftPower: () => (drives ? power() * mechanicalEfficiency : 0),
     figures() {
       const before = flash(fluid, inlet);
       const after = flash(fluid, outlet);
@@ -112,7 +117,7 @@ function placeExpander({ entry, inlet, outlet }: Port, { fluid }: Setting): Unit
         power: power(),
         shaftPower: power() * mechanicalEfficiency,
         pressureRatio: inlet.pressure / outlet.pressure,
-        stagePressureRatio: ratio,
+        stagePressureRatio: stageRatio(),
         inletTemperature: before.temperature,
         outletTemperature: after.temperature,
         outletVapourFraction: Number.isNaN(after.vapourFraction) ? null : after.vapourFraction,

@@ -9,7 +9,8 @@ export type Dimension =
   | "power"
   | "conductance"
   | "volume"
-  | "specific enthalpy";
+  | "specific enthalpy"
+  | "mass flow";
 
 /** A key whose value is a number with a unit, or a bare fraction or count. */
 export interface NumberKey {
@@ -45,7 +46,17 @@ export interface BlockKey {
   readonly side?: string;
 }
 
-export type Key = NumberKey | FlagKey | BlockKey;
+/** A key that names a branch, or one of a few words with a meaning of their own. */
+export interface BranchKey {
+  readonly type: "branch";
+  readonly name: string;
+  readonly words: readonly string[];
+  readonly help: string;
+  readonly required: true;
+  readonly side?: string;
+}
+
+export type Key = NumberKey | FlagKey | BlockKey | BranchKey;
 
 /** A group of keys of which exactly one must be given (or at most one, where `optional`). */
 export interface Alternative {

@@ -9,6 +9,8 @@ import type { Unit } from "./unit.js";
 export interface Setting {
   readonly fluid: Fluid;
   readonly surroundings: { /** K */ readonly temperature: number; /** Pa */ readonly pressure: number };
+  /** W that expanders deliver to the shaft of the block named, as of their last evaluation. */
+  shaftPowerInto(name: string): number;
 }
 
 /** The streams that one entry of the loop stands between. */
@@ -16,6 +18,18 @@ export interface Port {
   readonly entry: BlockDefinition;
   readonly inlet: Stream;
   readonly outlet: Stream;
+  /** The second stream that a kind with a `branch` gives or takes. */
+  readonly branch?: Stream;
+}
+
+/** How a kind joins a branch to the line that it stands in. */
+export interface Joint {
+  /** The key that names the branch. */
+  readonly key: string;
+  /** Whether the branch begins or ends here. */
+  readonly direction: "gives" | "takes";
+  /** Share of the flow that goes down the branch; undefined where it follows from the state of the gas. */
+  share?(entry: BlockDefinition): number;
 }
 
 /**
@@ -37,10 +51,17 @@ export interface BlockKind {
   readonly figures: readonly Figure[];
   /** The key whose value decides whether the machine liquefies: an expander's efficiency. */
   readonly liquefactionKey?: string;
+  /** The branch that begins or ends at the block. */
+  readonly joint?: Joint;
+  /** True where the gas leaves the machine here, at the end of a branch. */
+  readonly leaves?: true;
+  /** The key that names the block driven, and whether a block may be driven instead of having its outlet pressure given. */
+  readonly drivesKey?: string;
+  readonly mayFloat?: true;
   /** True where the outlet's state is fixed whatever comes in, so that no feedback passes through the block. */
   fixesOutlet?(entry: BlockDefinition): boolean;
   /** Checks between the keys of a block, over all its entries; ranges and alternatives are checked from the records. */
-  check?(entries: readonly BlockDefinition[], setting: Omit<Setting, "fluid">): Problem[];
+  check?(entries: readonly BlockDefinition[], setting: Pick<Setting, "surroundings">): Problem[];
   /**
    * Pressure (Pa) behind an entry, from the pressure before it; undefined where it needs the inlet's and has none.
    */

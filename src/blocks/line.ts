@@ -26,7 +26,7 @@ function placeLine({ entry, inlet, outlet }: Port, { fluid, surroundings }: Sett
     name: entry.name,
     kind: entry.kind,
     evaluate() {
-      outlet.enthalpy = inlet.enthalpy + leak / inlet.massFlow;
+      outlet.enthalpy = inlet.massFlow > 0 ? inlet.enthalpy + leak / inlet.massFlow : inlet.enthalpy;
     },
     energyFlows: () => ({ work: 0, drive: 0, heat: [{ heat: leak, temperature: surroundings.temperature }] }),
     figures: () => ({ heatLeak: leak, pressureDrop: inlet.pressure - outlet.pressure }),

@@ -54,7 +54,7 @@ function placeLoad({ entry, inlet, outlet }: Port, { fluid }: Setting): Unit {
     evaluate() {
       outlet.enthalpy =
         outletTemperature === undefined
-          ? inlet.enthalpy + heat() / inlet.massFlow
+          ? inlet.massFlow > 0 ? inlet.enthalpy + heat() / inlet.massFlow : inlet.enthalpy
           : fluid.temperaturePressure(outletTemperature, outlet.pressure, scratch).enthalpy;
     },
     energyFlows() {

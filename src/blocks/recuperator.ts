@@ -122,6 +122,13 @@ function placeRecuperator(warm: Port, cold: Port, { fluid, surroundings }: Setti
     name: warm.entry.name,
     kind: warm.entry.kind,
     evaluate() {
+      if (!(warm.inlet.massFlow > 0 && cold.inlet.massFlow > 0)) {
+        // Nothing flows on one side: a branch that carries liquid, before there is any.
+        duty = 0;
+        warm.outlet.enthalpy = warm.inlet.enthalpy;
+        cold.outlet.enthalpy = cold.inlet.enthalpy;
+        return;
+      }
       connect();
       duty = transferred();
       warm.outlet.enthalpy = warm.inlet.enthalpy - duty / warm.inlet.massFlow;

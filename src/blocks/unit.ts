@@ -23,6 +23,12 @@ export interface EnergyFlows {
   /** W that motors, or an outside refrigerator, take from outside for this block */
   readonly drive: number;
   readonly heat: readonly HeatFlow[];
+  /** W of the work that comes from expanders on the same shaft. */
+  readonly recovered?: number;
+  /** W of the work done that drives another block. */
+  readonly delivered?: number;
+  /** What the power that goes neither into the gas nor to another block is lost in: "drive", "brake"; left out, the block itself. */
+  readonly lostIn?: string;
 }
 
 /** A block in its place, with its numbers ready. */
@@ -35,6 +41,8 @@ export interface Unit {
   energyFlows(): EnergyFlows;
   /** The block's own figures in SI units. */
   figures(): Readonly<Record<string, unknown>>;
+  /** W at the shaft, of a block that drives another, as of the last evaluation. */
+  shaftPower?(): number;
   /** The refrigeration taken up, of a block that is a load. */
   refrigeration?(): Refrigeration;
   /** Why the converged state is no machine that can exist, where it is none: heat that would have to flow backwards. */

@@ -26,7 +26,7 @@ export function assemble(network: Network, settled: Settled): Assembled {
   const accounts = audit(network);
   refuseOpenAccounts(accounts);
   const stations = stationsOf(network, accounts);
-  const coldest = stations.reduce((cold, station) => (station.temperature < cold.temperature ? station : cold));
+  const coldest = stations.filter(({ massFlow }) => massFlow > 0).reduce((cold, station) => (station.temperature < cold.temperature ? station : cold));
   const loads: LoadResult[] = blocks.flatMap(({ unit }) =>
     unit.refrigeration === undefined ? [] : [{ name: unit.name, ...unit.refrigeration() }],
   );
@@ -48,7 +48,7 @@ export function assemble(network: Network, settled: Settled): Assembled {
     refrigeration: { capacity, loads },
     power,
     performance: performanceOf(network, accounts, capacity, power.net),
-    liquid: liquidOf(stations),
+    liquid: network.products.length > 0 ? productOf(network) : liquidOf(stations),
     stations,
     blocks: blocks.map(({ unit }) => ({ name: unit.name, kind: unit.kind, ...unit.figures() })),
     audit: { energy: accounts.energy, exergy: accounts.exergy },
@@ -73,7 +73,7 @@ function refuseOpenAccounts({ residual, energy, exergy, worstBlock }: Audit): vo
 }
 
 /** State points in the order in which the gas passes them. */
-function stationsOf({ definition, streams, inlet, setting }: Network, accounts: Audit): Station[] {
+function stationsOf({ definition, labelled, inlet, setting }: Network, accounts: Audit): Station[] {
   const at = (stream: Stream, station: number, after: string): Station => {
     const state = setting.fluid.pressureEnthalpy(stream.pressure, stream.enthalpy, stream.state);
     return {
@@ -90,9 +90,7 @@ function stationsOf({ definition, streams, inlet, setting }: Network, accounts: 
       exergy: accounts.exergyOf(stream),
     };
   };
-  const stations = definition.loop.map(({ name, side }, index) =>
-    at(streams[index] as Stream, index + 1, side === undefined ? name : `${name} ${side}`),
-  );
+  const stations = labelled.map(({ after, stream }, index) => at(stream, index + 1, after));
   return definition.circuit === "open" ? [at(inlet, 0, "intake"), ...stations] : stations;
 }
 
@@ -100,12 +98,14 @@ function powerOf({ flows }: Audit): SteadyState["power"] {
   let compression = 0;
   let drive = 0;
   let expansion = 0;
+  let recovered = 0;
   for (const flow of flows.values()) {
     if (flow.work > 0) compression += flow.work;
     else expansion -= flow.work;
     drive += flow.drive;
+    recovered += flow.recovered ?? 0;
   }
-  return { compression, drive, expansion, recovered: 0, net: drive };
+  return { compression, drive, expansion, recovered, net: drive };
 }
 
 /** Against a reversible refrigerator that lifts each load's heat from the mean temperature at which the gas takes it up. */
@@ -116,10 +116,20 @@ function performanceOf({ blocks, setting }: Network, accounts: Audit, capacity: 
     if (unit.refrigeration === undefined) continue;
     for (const { heat, temperature } of accounts.flows.get(unit.name)?.heat ?? []) reversible += heat * (ambient / temperature - 1);
   }
-  if (capacity <= 0 || net <= 0) return { cop: null, carnotCop: null, secondLawEfficiency: null };
-  // Loads no colder than the surroundings need no refrigerator: there is no ideal to compare with.
-  if (reversible <= 0) return { cop: capacity / net, carnotCop: null, secondLawEfficiency: null };
-  return { cop: capacity / net, carnotCop: capacity / reversible, secondLawEfficiency: reversible / net };
+  const useful = reversible + accounts.productExergy;
+  if (net <= 0) return { cop: null, carnotCop: null, secondLawEfficiency: null };
+  return {
+    cop: capacity > 0 ? capacity / net : null,
+    // Loads no colder than the surroundings need no refrigerator: there is no ideal to compare with.
+    carnotCop: capacity > 0 && reversible > 0 ? capacity / reversible : null,
+    secondLawEfficiency: useful > 0 ? useful / net : null,
+  };
+}
+
+/** What is drawn as product. */
+function productOf({ products, inlet }: Network): SteadyState["liquid"] {
+  const massFlow = products.reduce((sum, stream) => sum + stream.massFlow, 0);
+  return massFlow > 0 ? { massFlow, fractionOfFlow: massFlow / inlet.massFlow, oxygenMoleFraction: null } : null;
 }
 
 /** The liquid carried by the wettest station. */

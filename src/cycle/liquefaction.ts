@@ -1,10 +1,11 @@
-import { given } from "../blocks/definition.js";
+import { given, type BlockDefinition } from "../blocks/definition.js";
 import { blockKind } from "../blocks/registry.js";
 import { bracketedRoot } from "../fluids/root.js";
-import { fluid as fluidNamed } from "../fluids/registry.js";
 import type { CycleDefinition } from "./definition.js";
+import { linesOf } from "./lines.js";
 import { NoSteadyState } from "./failure.js";
-import type { Liquefaction, Station } from "./result.js";
+import type { Network } from "./network.js";
+import type { Liquefaction } from "./result.js";
 
 /** Efficiency to which the threshold is known. */
 const TOLERANCE = 1e-7;
@@ -25,11 +26,13 @@ export interface Trial {
   readonly tears: Float64Array;
 }
 
-/** How far a machine's stations are from condensing. */
-export function liquefactionMargin(stations: readonly Station[], fluidName: string): Margin | null {
-  const fluid = fluidNamed(fluidName);
+/** How far a settled machine's streams are from condensing. */
+export function liquefactionMargin({ labelled, setting }: Network): Margin | null {
+  const { fluid } = setting;
   let least: Margin | null = null;
-  for (const { pressure, enthalpy, after } of stations) {
+  for (const { after, stream, aside } of labelled) {
+    const { pressure, enthalpy, massFlow } = stream;
+    if (aside === true || massFlow <= 0) continue;
     if (pressure >= fluid.criticalPressure || pressure < fluid.lowestSaturationPressure) continue;
     const margin = enthalpy - fluid.saturation(pressure).vapourEnthalpy;
     if (least === null || margin < least.margin) least = { margin, where: after };
@@ -89,19 +92,24 @@ export function liquefactionThreshold(
   return answer(bracketedRoot(marginAt, low, high, { tolerance: TOLERANCE }, lowMargin, highMargin), null);
 }
 
-function efficiencies({ loop }: CycleDefinition, expander: string | undefined): number[] {
-  return loop.flatMap((entry) => {
-    const key = blockKind(entry.kind)?.liquefactionKey;
-    const value = key === undefined || (expander !== undefined && entry.name !== expander) ? undefined : given(entry, key);
-    return value === undefined ? [] : [value];
-  });
+function efficiencies(definition: CycleDefinition, expander: string | undefined): number[] {
+  return linesOf(definition).flatMap(({ entries }) =>
+    entries.flatMap((entry) => {
+      const key = liquefactionKey(entry, expander);
+      return key === undefined ? [] : (given(entry, key) ?? []);
+    }),
+  );
 }
 
 function withEfficiency(definition: CycleDefinition, efficiency: number, expander: string | undefined): CycleDefinition {
-  const loop = definition.loop.map((entry) => {
-    const key = blockKind(entry.kind)?.liquefactionKey;
-    if (key === undefined || (expander !== undefined && entry.name !== expander)) return entry;
-    return { ...entry, values: { ...entry.values, [key]: efficiency } };
-  });
-  return { ...definition, loop };
+  const changed = (entry: BlockDefinition): BlockDefinition => {
+    const key = liquefactionKey(entry, expander);
+    return key === undefined ? entry : { ...entry, values: { ...entry.values, [key]: efficiency } };
+  };
+  const branches = Object.entries(definition.branches).map(([name, entries]) => [name, entries.map(changed)] as const);
+  return { ...definition, loop: definition.loop.map(changed), branches: Object.fromEntries(branches) };
+}
+
+function liquefactionKey({ kind, name }: BlockDefinition, expander: string | undefined): string | undefined {
+  return expander === undefined || name === expander ? blockKind(kind)?.liquefactionKey : undefined;
 }

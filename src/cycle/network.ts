@@ -6,7 +6,11 @@ import type { Unit } from "../blocks/unit.js";
 import { fluid as fluidNamed } from "../fluids/registry.js";
 import { State } from "../fluids/state.js";
 import type { CycleDefinition, Flow } from "./definition.js";
-import { planPressures } from "./plan.js";
+import { branchGiven, branchTaken, givesProduct, linesOf } from "./lines.js";
+import { makeUp } from "./make-up.js";
+import { evaluationOrder, type Tear } from "./order.js";
+import { floatingBlocks, planPressures } from "./plan.js";
+import { staticShares } from "./shares.js";
 
 /** A block in the network, between its streams. */
 export interface Placed {
@@ -15,22 +19,44 @@ export interface Placed {
   readonly ports: readonly Port[];
 }
 
+/** A stream with what the gas has just left, for the state-point table. */
+export interface Labelled {
+  readonly after: string;
+  readonly stream: Stream;
+  /** True for what leaves its line at a joint: a separator's liquid says nothing of how near the rest is to condensing. */
+  readonly aside?: true;
+}
+
+/** A block whose outlet pressure follows from the power that drives it. */
+export interface Floating {
+  readonly name: string;
+  readonly placed: Placed;
+}
 
 /** The machine as streams and blocks, pressures and flows planned, in an order in which it can be evaluated. */
 export interface Network {
   readonly definition: CycleDefinition;
   readonly setting: Setting;
-  /** The stream behind each entry of the loop, in its order. */
-  readonly streams: readonly Stream[];
+  /** Every stream but an open circuit's intake, as the gas passes them: the loop's, then the branches'. */
+  readonly labelled: readonly Labelled[];
   /** The stream at the compressor's inlet of a closed circuit, or an open one's intake. */
   readonly inlet: Stream;
-  /** Blocks in the order of the loop. */
+  /** What comes in from outside: an open circuit's intake, a closed one's make-up. */
+  readonly comingIn: readonly Stream[];
+  /** What leaves as product. */
+  readonly products: readonly Stream[];
+  /** An open circuit's exhaust. */
+  readonly exhaust: Stream | undefined;
+  /** Blocks as the gas meets them. */
   readonly blocks: readonly Placed[];
   /** Blocks in the order of evaluation. */
   readonly order: readonly Placed[];
-  readonly tears: readonly Stream[];
-  /** Sets the mass flow of every stream, once the compressor's inlet has an enthalpy. */
+  readonly tears: readonly Tear[];
+  readonly floating: readonly Floating[];
+  /** Sets the mass flows that follow from the machine's own, once the compressor's inlet has an enthalpy. */
   setFlows(): void;
+  /** Sets the pressures for the floating blocks' ratios, in their order. */
+  setPressures(ratios: readonly number[]): void;
 }
 
 /**
@@ -38,42 +64,112 @@ export interface Network {
  * @throws Error when the definition has problems that the reader should have reported
  */
 export function buildNetwork(definition: CycleDefinition): Network {
-  const { loop, surroundings, circuit } = definition;
+  const { surroundings, loop } = definition;
   const fluid = fluidNamed(definition.fluid);
-  const setting: Setting = { fluid, surroundings };
   const plan = planPressures(definition);
   if (plan.problems[0] !== undefined) throw new Error(`unchecked definition: ${plan.problems[0].found}`);
 
-  const streams = plan.behind.map((pressure) => streamAt(pressure));
-  const open = circuit === "open";
-  const intake = open ? streamAt(surroundings.pressure) : (streams.at(-1) as Stream);
-  if (open) {
-    intake.enthalpy = fluid.temperaturePressure(surroundings.temperature, surroundings.pressure, intake.state).enthalpy;
+  const lines = linesOf(definition);
+  const entries = lines.flatMap((line) => line.entries);
+  const behind = new Map(entries.map((entry) => [entry, streamAt(plan.behind.get(entry) as number)]));
+  const ofEntry = (entry: BlockDefinition): Stream => behind.get(entry) as Stream;
+  /** Streams that leave their line at a joint. */
+  const aside = new Map<BlockDefinition, Stream>();
+  for (const entry of entries) {
+    if (branchGiven(entry) !== undefined || givesProduct(entry)) aside.set(entry, streamAt(ofEntry(entry).pressure));
   }
-  const portOf = (entry: BlockDefinition): Port => {
-    const index = loop.indexOf(entry);
-    return { entry, inlet: index === 0 ? intake : (streams[index - 1] as Stream), outlet: streams[index] as Stream };
-  };
-  const blocks = gather(loop).map((entries): Placed => {
-    const kind = blockKind(entries[0]?.kind ?? "") as BlockKind;
-    const ports = bySide(kind, entries).map(portOf);
-    return { unit: kind.place(ports, setting), kind, ports };
+  const products = entries.flatMap((entry) => {
+    if (blockKind(entry.kind)?.leaves === true) return [ofEntry(entry)];
+    return givesProduct(entry) ? [aside.get(entry) as Stream] : [];
   });
-  const known = new Set<Stream>(open ? [intake] : []);
-  const compressorInlet = open ? intake : inletOfFirstCompressor(loop, portOf);
-  const tears: Stream[] = [];
-  if (definition.flow.kind === "inlet volume" && !known.has(compressorInlet)) {
-    tears.push(compressorInlet);
-    known.add(compressorInlet);
+  const open = definition.circuit === "open";
+  const compressor = entries.find((entry) => blockKind(entry.kind)?.pressureChange === "rises") ?? loop[0];
+  const remade = !open && products.length > 0;
+  const suction = remade ? streamAt(plan.before.get(compressor) as number) : undefined;
+  const intake = open ? streamAt(surroundings.pressure) : undefined;
+
+  const branchStart = new Map<string, Stream>();
+  for (const entry of entries) {
+    const name = branchGiven(entry);
+    if (name !== undefined) branchStart.set(name, aside.get(entry) as Stream);
   }
-  const order = evaluationOrder(blocks, known, tears);
-  const scratch = new State();
-  const setFlows = (): void => {
-    const massFlow = massFlowOf(definition.flow, fluid, compressorInlet, scratch);
-    intake.massFlow = massFlow;
-    for (const stream of streams) stream.massFlow = massFlow;
+  const inletOf = new Map<BlockDefinition, Stream>();
+  for (const { branch, entries: line } of lines) {
+    line.forEach((entry, index) => {
+      const start = branch === undefined ? (intake ?? ofEntry(line.at(-1) as BlockDefinition)) : (branchStart.get(branch) as Stream);
+      inletOf.set(entry, index === 0 ? start : ofEntry(line[index - 1]));
+    });
+  }
+  const returning = inletOf.get(compressor) as Stream;
+  if (suction !== undefined) inletOf.set(compressor, suction);
+
+  const portOf = (entry: BlockDefinition): Port => {
+    const taken = branchTaken(entry);
+    const joining = taken === undefined ? aside.get(entry) : ofEntry(definition.branches[taken].at(-1) as BlockDefinition);
+    return { entry, inlet: inletOf.get(entry) as Stream, outlet: ofEntry(entry), ...(joining === undefined ? {} : { branch: joining }) };
   };
-  return { definition, setting, streams, inlet: intake, blocks, order, tears, setFlows };
+  const byName = new Map<string, Unit[]>();
+  const setting: Setting = {
+    fluid,
+    surroundings,
+    shaftPowerInto: (name) => (byName.get(name) ?? []).reduce((sum, unit) => sum + (unit.shaftPower?.() ?? 0), 0),
+  };
+  const blocks = gather(entries).map((together): Placed => {
+    const kind = blockKind(together[0].kind) as BlockKind;
+    const placed = { unit: kind.place(bySide(kind, together).map(portOf), setting), kind, ports: bySide(kind, together).map(portOf) };
+    const driven = kind.drivesKey === undefined ? undefined : together[0].values[kind.drivesKey];
+    if (typeof driven === "string") byName.set(driven, [...(byName.get(driven) ?? []), placed.unit]);
+    return placed;
+  });
+  const comingIn: Stream[] = [];
+  if (suction !== undefined) {
+    const fresh = streamAt(suction.pressure);
+    comingIn.push(fresh);
+    blocks.push(makeUp({ inlet: returning, outlet: suction, branch: fresh }, setting));
+  }
+  if (intake !== undefined) {
+    intake.enthalpy = fluid.temperaturePressure(surroundings.temperature, surroundings.pressure, intake.state).enthalpy;
+    comingIn.push(intake);
+  }
+  const inlet = intake ?? suction ?? returning;
+  const compressorInlet = inletOf.get(compressor) as Stream;
+  const shares = staticShares(blocks, compressorInlet);
+  const volumeFlow = definition.flow.kind === "inlet volume" && intake !== compressorInlet;
+  const { order, tears } = evaluationOrder(blocks, intake, volumeFlow ? compressorInlet : undefined, shares);
+  const scratch = new State();
+  const floating = floatingBlocks(definition).map(({ name }) => ({ name, placed: blocks.find(({ unit }) => unit.name === name) as Placed }));
+  const streams = [...shares.keys()];
+  const parts = [...shares.values()];
+
+  return {
+    definition,
+    setting,
+    labelled: labelsOf(lines.flatMap((line) => line.entries), ofEntry, aside, suction),
+    inlet,
+    comingIn,
+    products,
+    exhaust: open ? ofEntry(loop.at(-1) as BlockDefinition) : undefined,
+    blocks,
+    order,
+    tears,
+    floating,
+    setFlows() {
+      const massFlow = massFlowOf(definition.flow, fluid, compressorInlet, scratch);
+      for (let i = 0; i < streams.length; i++) streams[i].massFlow = massFlow * parts[i];
+    },
+    setPressures(ratios) {
+      if (floating.length === 0) return;
+      const planned = planPressures(definition, new Map(floating.map(({ name }, i) => [name, ratios[i]])));
+      for (const entry of entries) {
+        const pressure = planned.behind.get(entry) as number;
+        ofEntry(entry).pressure = pressure;
+        const leaving = aside.get(entry);
+        if (leaving !== undefined) leaving.pressure = pressure;
+      }
+      const before = planned.before.get(compressor) as number;
+      if (suction !== undefined) for (const stream of [suction, ...comingIn]) stream.pressure = before;
+    },
+  };
 }
 
 function streamAt(pressure: number): Stream {
@@ -83,9 +179,9 @@ function streamAt(pressure: number): Stream {
 }
 
 /** The entries of each block together, blocks in the order in which the gas first meets them. */
-function gather(loop: readonly BlockDefinition[]): BlockDefinition[][] {
+function gather(entries: readonly BlockDefinition[]): BlockDefinition[][] {
   const blocks = new Map<string, BlockDefinition[]>();
-  for (const entry of loop) {
+  for (const entry of entries) {
     const together = blocks.get(entry.name);
     if (together === undefined) blocks.set(entry.name, [entry]);
     else together.push(entry);
@@ -98,42 +194,21 @@ function bySide(kind: BlockKind, entries: readonly BlockDefinition[]): readonly 
   return kind.sides.flatMap((side) => entries.filter((entry) => entry.side === side));
 }
 
-/** The flow is stated at the inlet of the first block that raises the pressure. */
-function inletOfFirstCompressor(loop: readonly BlockDefinition[], portOf: (entry: BlockDefinition) => Port): Stream {
-  const first = loop.find((entry) => blockKind(entry.kind)?.pressureChange === "rises") ?? (loop[0] as BlockDefinition);
-  return portOf(first).inlet;
-}
-
-/**
- * An order in which every block is evaluated after the blocks that feed it. Where feedback leaves none, the inlets that
- * are still unknown of the first block that the gas has reached are assumed: these are the tears.
- */
-function evaluationOrder(blocks: readonly Placed[], known: Set<Stream>, tears: Stream[]): Placed[] {
-  const order: Placed[] = [];
-  const waiting = new Set(blocks);
-  for (const block of blocks) {
-    if (block.ports.every(({ entry }) => block.kind.fixesOutlet?.(entry) === true)) {
-      for (const { outlet } of block.ports) known.add(outlet);
-      order.push(block);
-      waiting.delete(block);
-    }
-  }
-  while (waiting.size > 0) {
-    const candidates = [...waiting];
-    const missing = (block: Placed): Stream[] => block.ports.map(({ inlet }) => inlet).filter((stream) => !known.has(stream));
-    const next =
-      candidates.find((block) => missing(block).length === 0) ??
-      candidates.find((block) => missing(block).length < block.ports.length) ??
-      (candidates[0] as Placed);
-    for (const stream of missing(next)) {
-      tears.push(stream);
-      known.add(stream);
-    }
-    for (const { outlet } of next.ports) known.add(outlet);
-    order.push(next);
-    waiting.delete(next);
-  }
-  return order;
+function labelsOf(
+  entries: readonly BlockDefinition[],
+  ofEntry: (entry: BlockDefinition) => Stream,
+  aside: ReadonlyMap<BlockDefinition, Stream>,
+  suction: Stream | undefined,
+): Labelled[] {
+  const labels = entries.flatMap((entry) => {
+    const after = entry.side === undefined ? entry.name : `${entry.name} ${entry.side}`;
+    const leaving = aside.get(entry);
+    const joint = blockKind(entry.kind)?.joint;
+    const label = { after, stream: ofEntry(entry) };
+    if (leaving === undefined || joint === undefined) return [label];
+    return [label, { after: `${entry.name} ${joint.key}`, stream: leaving, aside: true as const }];
+  });
+  return suction === undefined ? labels : [...labels, { after: "make-up", stream: suction }];
 }
 
 function massFlowOf(flow: Flow, fluid: Setting["fluid"], inlet: Stream, scratch: State): number {

@@ -1,4 +1,4 @@
-import type { OutOfRangeError } from "../fluids/errors.js";
+import { OutOfRangeError } from "../fluids/errors.js";
 import { NoSteadyState } from "./failure.js";
 import type { Network } from "./network.js";
 import type { Pass } from "./pass.js";
@@ -27,11 +27,11 @@ export function outOfRange(pass: Pass, error: OutOfRangeError): NoSteadyState {
 }
 
 /** No fixed point in as many passes as are tried. */
-export function unsettled(pass: Pass, kelvin: number): NoSteadyState {
+export function unsettled(pass: Pass, drift: number): NoSteadyState {
   return new NoSteadyState(
     null,
     "balance",
-    `no steady state was found in ${pass.count} passes; the nearest still drifted by ${kelvin.toPrecision(2)} K a pass.`,
+    `no steady state was found in ${pass.count} passes; the nearest still drifted by ${drift.toPrecision(2)} J/kg a pass.`,
     "Change a pressure or an efficiency a little and run again.",
   );
 }
@@ -47,7 +47,7 @@ export function tooWarm({ tears, blocks, setting }: Network, change: Float64Arra
     asked += heat;
     if (heat > heaviest) [heaviest, largestLoad] = [heat, ports[0]?.entry.name ?? null];
   }
-  const excess = Math.max(...change.map((value, i) => value * (tears[i]?.massFlow ?? 0)));
+  const excess = Math.max(...change.map((value, i) => value * (tears[i]?.stream.massFlow ?? 0)));
   const lifts = Math.max(0, asked - excess);
   return new NoSteadyState(
     largestLoad,
@@ -57,4 +57,14 @@ export function tooWarm({ tears, blocks, setting }: Network, change: Float64Arra
       : `heat comes in faster than the machine lifts it even with its cold end as warm as the surroundings (${temperature.toFixed(2)} K).`,
     "Lower the load or the leaks, or raise the flow, the pressure ratio or the expander's efficiency.",
   );
+}
+
+/** Runs a pass that has to succeed, turning a state outside the equation into the answer that there is no steady state. */
+export function guarded(pass: Pass, run: () => void): void {
+  try {
+    run();
+  } catch (error) {
+    if (error instanceof OutOfRangeError) throw outOfRange(pass, error);
+    throw error;
+  }
 }

@@ -24,7 +24,7 @@ export function solve(definition: CycleDefinition, options: SolveOptions = {}): 
   const network = buildNetwork(definition);
   const settled = settle(network, { lookColder: options.lookColder !== false });
   const assembled = assemble(network, settled);
-  const margin = liquefactionMargin(assembled.stations, definition.fluid);
+  const margin = liquefactionMargin(network);
   const liquefaction: Liquefaction =
     options.threshold === false
       ? { reached: margin !== null && margin.margin < 0, margin: margin?.margin ?? null, where: margin?.where ?? null, parameter: "", required: null, reason: "not asked for", given: null }
@@ -35,11 +35,5 @@ export function solve(definition: CycleDefinition, options: SolveOptions = {}): 
 function trial(definition: CycleDefinition, from: Float64Array | undefined): Trial {
   const network = buildNetwork(definition);
   const { tears } = settle(network, { lookColder: false, from });
-  const { fluid } = network.setting;
-  let margin = Infinity;
-  for (const { pressure, enthalpy } of network.streams) {
-    if (pressure >= fluid.criticalPressure || pressure < fluid.lowestSaturationPressure) continue;
-    margin = Math.min(margin, enthalpy - fluid.saturation(pressure).vapourEnthalpy);
-  }
-  return { margin, tears };
+  return { margin: liquefactionMargin(network)?.margin ?? Infinity, tears };
 }

@@ -15,6 +15,7 @@ const WRITE: Readonly<Record<string, (value: number) => string>> = {
   power: watts,
   conductance: (value) => `${significant(value, 4)} W/K`,
   volume: (value) => `${significant(value * 1e3, 4)} L`,
+  "mass flow": (value) => `${significant(value * 1e3, 4)} g/s`,
   "specific enthalpy": (value) => `${fixed(value / 1e3, 2)} kJ/kg`,
 };
 

@@ -61,7 +61,7 @@ function power({ power: bought, performance: { cop, secondLawEfficiency }, massF
 
 /** The largest destroyers of what is bought, and the tightest place in each exchanger. */
 function limits({ exergy, blocks }: CycleResult): Line[] {
-  const kinds = new Map(blocks.map(({ name, kind }) => [name, `${kind} ${name}`]));
+  const kinds = new Map(blocks.map(({ name, kind }) => [name, kind === name ? name : `${kind} ${name}`]));
   const worst = exergy.toSorted((a, b) => b.destroyed - a.destroyed).slice(0, 3);
   const losses = worst.map(({ block, share }) => `${kinds.get(block) ?? block} ${percent(share, 0)}`).join(", ");
   const pinches = blocks.flatMap(({ name, smallestDifference, smallestDifferenceAt }) =>

@@ -1,6 +1,7 @@
 import { blockKind } from "../blocks/registry.js";
 import type { BlockDefinition } from "../blocks/definition.js";
 import type { CycleDefinition, Flow } from "../cycle/definition.js";
+import { linesOf } from "../cycle/lines.js";
 import { planPressures } from "../cycle/plan.js";
 import { figureText } from "./figures.js";
 import { bars, fixed, significant } from "./numbers.js";
@@ -12,15 +13,16 @@ const PRESSURE = 5;
 
 /** What a checked file says, for its writer to compare with what was meant. */
 export function understood(definition: CycleDefinition): string {
-  const { title, fluid, circuit, surroundings, flow, loop } = definition;
+  const { title, fluid, circuit, surroundings, flow } = definition;
+  const entries = linesOf(definition).flatMap((line) => line.entries);
   const { before, behind } = planPressures(definition);
-  const names = loop.map(({ name, side }) => (side === undefined ? name : `${name} ${side}`));
-  const left = longest(names) + longest(loop.map(({ kind }) => kind)) + 2 * PRESSURE + 4 * GAP.length;
-  const rows = loop.map((entry, i) => [
+  const names = entries.map(({ name, side }) => (side === undefined ? name : `${name} ${side}`));
+  const left = longest(names) + longest(entries.map(({ kind }) => kind)) + 2 * PRESSURE + 4 * GAP.length;
+  const rows = entries.map((entry, i) => [
     names[i],
     entry.kind,
-    significant(before[i] / 1e5, 4),
-    significant(behind[i] / 1e5, 4),
+    significant((before.get(entry) ?? NaN) / 1e5, 4),
+    significant((behind.get(entry) ?? NaN) / 1e5, 4),
     wrapItems(keyTexts(entry), { separator: ",", width: WIDTH - left }),
   ]);
   return [
@@ -50,7 +52,7 @@ function longest(texts: readonly string[]): number {
 function keyTexts({ kind, values }: BlockDefinition): string[] {
   return (blockKind(kind)?.keys ?? []).flatMap((key) => {
     const value = values[key.name];
-    if (value === undefined || (key.type !== "block" && value === key.default) || key.name === "outlet-pressure") return [];
+    if (value === undefined || ("default" in key && value === key.default) || key.name === "outlet-pressure") return [];
     const text = key.type === "number" ? figureText(value, { name: key.name, label: "", dimension: key.dimension }) : String(value);
     return [`${key.name} ${text}`];
   });
