@@ -37,9 +37,8 @@ export class Document {
     try {
       this.root = this.read();
     } catch (error) {
-      // Nesting deeper than the stack.
-      if (error instanceof RangeError) throw this.refusal("too-deep", "lists or maps nested hundreds deep", "a cycle file");
-      throw error;
+      // The stack is too small to walk what the parser could still read.
+      throw error instanceof RangeError ? this.tooDeep() : error;
     }
   }
 
@@ -47,6 +46,7 @@ export class Document {
     const options = { lineCounter: this.lines, schema: "failsafe", prettyErrors: false, uniqueKeys: false } as const;
     const document = parseDocument(this.text, options);
     const [first] = document.errors;
+    if (first?.code === "RESOURCE_EXHAUSTION") throw this.tooDeep();
     // Whatever follows the first fault of form may be a consequence of it.
     if (first !== undefined) throw new InputError([this.problemAt(first.pos[0], { code: "yaml", ...yamlFault(first) })]);
     this.refuseAliases(document);
@@ -100,6 +100,10 @@ export class Document {
   private problemAt(offset: number, complaint: Complaint): LocatedProblem {
     const { line, col } = this.lines.linePos(offset);
     return { ...complaint, line: Math.max(1, line), column: Math.max(1, col), place: `${this.file}:${Math.max(1, line)}:${Math.max(1, col)}` };
+  }
+
+  private tooDeep(): InputError {
+    return this.refusal("too-deep", "lists or maps nested hundreds deep", "a cycle file, which has four levels");
   }
 
   private refusal(code: string, found: string, expected: string): InputError {

@@ -2,7 +2,7 @@ import type { CycleDefinition } from "../cycle/definition.js";
 import { addressed, addressesOf, resolve, sortOverrides, type Addressed } from "./address.js";
 import { Definer } from "./define.js";
 import { Document } from "./document.js";
-import type { LocatedProblem } from "./errors.js";
+import { InputError, inOrder, type LocatedProblem } from "./errors.js";
 import { written, type Given, type Override } from "./override.js";
 import { needsExpression } from "./quantity.js";
 import { entriesOf } from "./raw.js";
@@ -20,7 +20,7 @@ export interface CycleFile {
   define(overrides?: readonly Override[]): CycleDefinition;
   /**
    * What an address stands for.
-   * @throws InputError with the nearest address
+   * @throws InputError with the nearest address, or with the faults of the file's form where it has any
    */
   address(address: string): Addressed;
   /** The addresses of every number that the file gives. */
@@ -65,7 +65,11 @@ export function openCycleFile(text: string, file: string, evaluator?: Evaluate):
       const { sorted, refused } = sortOverrides(overrides, target);
       return definer.define(sorted, refused);
     },
-    address: (address) => addressed(address, raw, target(address), definer.evaluation(sortOverrides([], target).sorted)),
+    address(address) {
+      // What seems to be missing may be what the file misspells.
+      if (faults.length > 0) throw new InputError(inOrder(faults));
+      return addressed(address, raw, target(address), definer.evaluation(sortOverrides([], target).sorted));
+    },
     addresses: () => addressesOf(raw),
     needsExpressions: (overrides = []) => [...values, ...overrides].map(written).some((each) => typeof each === "string" && needsExpression(each)),
     useEvaluator(given) {

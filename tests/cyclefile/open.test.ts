@@ -107,10 +107,11 @@ describe("an address", () => {
     for (const address of listed) expect(file.address(address).given, address).toEqual(expect.any(Number));
   });
 
-  it("of every number of every kind resolves", () => {
+  it("of every number of every kind resolves, also of what the file leaves out", () => {
+    const complete = example("two-turbines-booster");
     for (const { kind, sides, keys } of blockKinds) {
-      const text = `fluid: air\nflow: 1 g/s\nloop:\n${(sides ?? [""]).map((side) => `  - ${kind}: { name: X${side === "" ? "" : `, side: ${side}`} }`).join("\n")}\n`;
-      const opened = openCycleFile(text, "x.yaml");
+      const entries = (sides ?? [undefined]).map((side) => `  - ${kind}: { name: X, ${side === undefined ? "" : `side: ${side}, `}${branchKeys(keys)} }\n`);
+      const opened = openCycleFile(changed(complete, ["loop:\n", `loop:\n${entries.join("")}`]), "x.yaml");
       for (const key of keys) {
         if (key.type !== "number") continue;
         const address = sides !== undefined && key.side === undefined ? `X.${sides[0]}.${key.name}` : `X.${key.name}`;
@@ -118,4 +119,13 @@ describe("an address", () => {
       }
     }
   });
+
+  it("in a file with faults is answered with these", () => {
+    const faulty = openCycleFile(changed(bench, ["- expander:", "- expandr:"]), "x.yaml");
+    expect(() => faulty.address("T1.efficiency")).toThrow(/expandr/);
+  });
 });
+
+function branchKeys(keys: (typeof blockKinds)[number]["keys"]): string {
+  return keys.flatMap(({ type, name }) => (type === "branch" ? [`${name}: x`] : [])).join(", ");
+}
