@@ -21,15 +21,17 @@ export const line: BlockKind = {
 };
 
 function placeLine({ entry, inlet, outlet }: Port, { fluid, surroundings }: Setting): Unit {
-  const leak = given(entry, "heat-leak") ?? 0;
+  const stated = given(entry, "heat-leak") ?? 0;
+  // Without flow, in a branch for liquid while there is none, nothing carries a leak away.
+  const leak = (): number => (inlet.massFlow > 0 ? stated : 0);
   return {
     name: entry.name,
     kind: entry.kind,
     evaluate() {
-      outlet.enthalpy = inlet.massFlow > 0 ? inlet.enthalpy + leak / inlet.massFlow : inlet.enthalpy;
+      outlet.enthalpy = inlet.massFlow > 0 ? inlet.enthalpy + stated / inlet.massFlow : inlet.enthalpy;
     },
-    energyFlows: () => ({ work: 0, drive: 0, heat: [{ heat: leak, temperature: surroundings.temperature }] }),
-    figures: () => ({ heatLeak: leak, pressureDrop: inlet.pressure - outlet.pressure }),
-    warnings: () => leakWarnings(entry.name, leak, flash(fluid, outlet).temperature, surroundings.temperature),
+    energyFlows: () => ({ work: 0, drive: 0, heat: [{ heat: leak(), temperature: surroundings.temperature }] }),
+    figures: () => ({ heatLeak: leak(), pressureDrop: inlet.pressure - outlet.pressure }),
+    warnings: () => leakWarnings(entry.name, leak(), flash(fluid, outlet).temperature, surroundings.temperature),
   };
 }

@@ -68,6 +68,13 @@ function placeLoad({ entry, inlet, outlet }: Port, { fluid }: Setting): Unit {
     figures: () => ({ ...refrigeration() }),
     refrigeration,
     impossible() {
+      if (!(inlet.massFlow > 0) && heat() > 0) {
+        return {
+          quantity: "heat",
+          reason: `no gas comes to it, so that nothing takes up its ${heat().toPrecision(4)} W.`,
+          advice: "Make the machine colder, so that liquid reaches it, or move the load.",
+        };
+      }
       if (heat() >= 0) return null;
       const arrives = flash(fluid, inlet).temperature;
       return {
