@@ -1,6 +1,8 @@
 import { given, required } from "./definition.js";
 import type { BlockKind, Port, Setting } from "./kind.js";
 import { flash, surely } from "./ports.js";
+import { purityClassDewPoint } from "../fluids/air-purity.js";
+import { cooledPassage } from "./passage.js";
 import { pressureAfterDrop, pressureDrop } from "./shared-keys.js";
 import { State } from "../fluids/state.js";
 import type { Unit } from "./unit.js";
@@ -30,8 +32,25 @@ export const aftercooler: BlockKind = {
       alternative: "outlet",
     },
     pressureDrop,
+    { type: "flag", name: "trap", help: "whether a trap at its outlet takes out the water that condenses from air", default: true },
+    {
+      type: "number",
+      name: "dryer",
+      dimension: "temperature",
+      range: { lowest: 150, highest: 373.15 },
+      help: "pressure dew point to which a dryer behind it dries air; left out with dryer-class, there is none",
+      alternative: "dryer",
+    },
+    {
+      type: "number",
+      name: "dryer-class",
+      dimension: "count",
+      range: { lowest: 1, highest: 6 },
+      help: "the same as a water class of ISO 8573-1: 1 is -70 degC, 2 -40, 3 -20, 4 +3, 5 +7, 6 +10",
+      alternative: "dryer",
+    },
   ],
-  alternatives: [{ name: "outlet" }],
+  alternatives: [{ name: "outlet" }, { name: "dryer", optional: true }],
   figures: [
     { name: "heatRejected", label: "heat rejected", dimension: "power" },
     { name: "outletTemperature", label: "gas leaves at", dimension: "temperature" },
@@ -39,6 +58,10 @@ export const aftercooler: BlockKind = {
   ],
   fixesOutlet: () => true,
   check([entry], { surroundings }) {
+    const waterClass = given(surely(entry), "dryer-class");
+    if (waterClass !== undefined && purityClassDewPoint(waterClass) === undefined) {
+      return [{ code: "not-whole", entry: surely(entry), key: "dryer-class", found: `${waterClass}`, expected: "a whole number" }];
+    }
     const outlet = given(surely(entry), "outlet-temperature");
     if (outlet === undefined || outlet >= surroundings.temperature) return [];
     return [
@@ -53,6 +76,10 @@ export const aftercooler: BlockKind = {
   },
   pressureChange: "falls or stays",
   outletPressure: pressureAfterDrop,
+  passage(solved) {
+    const waterClass = given(solved.entry, "dryer-class");
+    return cooledPassage(solved, given(solved.entry, "dryer") ?? (waterClass === undefined ? undefined : purityClassDewPoint(waterClass)));
+  },
   place: ([port], setting) => placeAftercooler(surely(port), setting),
 };
 

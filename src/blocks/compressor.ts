@@ -1,6 +1,7 @@
 import { compression, type Compression } from "./compression.js";
 import { given, type BlockDefinition } from "./definition.js";
 import type { BlockKind, Port, Setting } from "./kind.js";
+import { intercooledPassage } from "./passage.js";
 import { surely } from "./ports.js";
 import type { Problem } from "./problem.js";
 import { efficiencyKey } from "./shared-keys.js";
@@ -56,6 +57,7 @@ export const compressor: BlockKind = {
       help: "pressure lost in each intercooler",
       default: 0,
     },
+    { type: "flag", name: "intercooler-traps", help: "whether traps in the intercoolers take out the water that condenses from air", default: true },
     efficiencyKey("drive-efficiency", "shaft power over the power that the motor takes", { default: 1 }),
   ],
   alternatives: [{ name: "pressure", optional: true }, { name: "efficiency" }],
@@ -79,6 +81,7 @@ export const compressor: BlockKind = {
     if (outlet !== undefined || inletPressure === undefined || ratio === undefined) return outlet;
     return inletPressure * ratio;
   },
+  passage: intercooledPassage,
   place: ([port], setting) => placeCompressor(surely(port), setting),
 };
 

@@ -1,6 +1,7 @@
 import type { Fluid } from "../fluids/fluid.js";
 import type { BlockDefinition } from "./definition.js";
 import type { Alternative, Figure, Key } from "./keys.js";
+import type { Passage, Solved } from "./passage.js";
 import type { Problem } from "./problem.js";
 import type { Stream } from "./stream.js";
 import type { Unit } from "./unit.js";
@@ -68,6 +69,8 @@ export interface BlockKind {
   outletPressure(entry: BlockDefinition, inletPressure: number | undefined): number | undefined;
   /** Whether the pressure may rise, must fall, or may only fall or stay, through the block. */
   readonly pressureChange: "rises" | "falls" | "falls or stays";
+  /** The states that the gas passes inside, for what may condense or freeze out there; left out, inlet and outlet only. */
+  passage?(solved: Solved): Passage;
   /** The block with its numbers ready, between its streams; ports in the order of `sides`. */
   place(ports: readonly Port[], setting: Setting): Unit;
 }

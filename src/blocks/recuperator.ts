@@ -2,6 +2,7 @@ import { Counterflow, type Side } from "./counterflow.js";
 import { given, type BlockDefinition } from "./definition.js";
 import { leakWarnings } from "./leak.js";
 import type { BlockKind, Port, Setting } from "./kind.js";
+import { FILLED, profiledPassage } from "./passage.js";
 import { flash, surely } from "./ports.js";
 import { heatLeak, pressureAfterDrop, pressureDrop } from "./shared-keys.js";
 import type { Unit } from "./unit.js";
@@ -53,6 +54,23 @@ export const recuperator: BlockKind = {
     },
     { ...heatLeak, help: "heat that comes into the cold stream through the insulation", side: "warm" },
     pressureDrop,
+    {
+      type: "number",
+      name: "passage-volume",
+      dimension: "volume",
+      range: { lowest: 0, open: "lowest" },
+      help: "volume of the warm gas's own passage, for the time in which frozen water and carbon dioxide fill it",
+      side: "warm",
+    },
+    {
+      type: "number",
+      name: "passage-filled",
+      dimension: "fraction",
+      range: { lowest: 0, highest: 1, open: "lowest" },
+      help: "the share of that volume whose filling is asked for",
+      default: FILLED,
+      side: "warm",
+    },
   ],
   alternatives: [{ name: "size", side: "warm" }],
   figures: [
@@ -69,6 +87,7 @@ export const recuperator: BlockKind = {
   ],
   pressureChange: "falls or stays",
   outletPressure: pressureAfterDrop,
+  passage: profiledPassage,
   place: ([warm, cold], setting) => placeRecuperator(surely(warm), surely(cold), setting),
 };
 
