@@ -19,6 +19,8 @@ const PROPERTIES: readonly Property[] = [
   { name: "isobaric heat capacity", heading: "cp", unit: "kJ/(kg K)", value: ({ isobaricHeatCapacity: cp }) => (cp === null ? null : cp / 1e3), show: (value) => fixed(value, 4) },
   { name: "isochoric heat capacity", heading: "cv", unit: "kJ/(kg K)", value: ({ isochoricHeatCapacity: cv }) => (cv === null ? null : cv / 1e3), show: (value) => fixed(value, 4) },
   { name: "speed of sound", heading: "sound", unit: "m/s", value: ({ speedOfSound }) => speedOfSound, show: (value) => fixed(value, 2) },
+  { name: "viscosity", heading: "viscosity", unit: "uPa s", value: ({ viscosity }) => (viscosity === null ? null : viscosity * 1e6), show: (value) => significant(value, 5) },
+  { name: "thermal conductivity", heading: "conduct.", unit: "mW/(m K)", value: ({ thermalConductivity: k }) => (k === null ? null : k * 1e3), show: (value) => significant(value, 5) },
   { name: "vapour fraction", heading: "vapour", unit: "kg/kg", value: ({ vapourFraction }) => vapourFraction, show: (value) => significant(value, 5) },
   { name: "phase", heading: "phase", align: "left", value: ({ phase }) => phase, show: String },
 ];
@@ -27,15 +29,16 @@ const PROPERTIES: readonly Property[] = [
 export function stateSheet(fluid: string, state: FluidState): string {
   const lines = PROPERTIES.map(({ name, unit = "", value, show }) => {
     const found = value(state);
-    const text = found === null ? `none (${phaseWords(state)})` : typeof found === "number" ? `${show(found)} ${unit}` : found;
+    const text = found === null ? `none (${absence(name, state)})` : typeof found === "number" ? `${show(found)} ${unit}` : found;
     return `  ${name.padEnd(25)}${text}`;
   });
   return [fluid, ...lines, "  (enthalpy and entropy are zero in the saturated liquid at 101.325 kPa)"].join("\n");
 }
 
 /** Why a property has no value at a state. */
-function phaseWords({ phase }: FluidState): string {
-  return phase === "two-phase" ? "between bubble and dew" : "above the critical pressure";
+function absence(property: string, { phase }: FluidState): string {
+  if (phase === "two-phase") return "between bubble and dew";
+  return property === "vapour fraction" ? "above the critical pressure" : "no published correlation at hand";
 }
 
 /** A row of a table of states. */
@@ -48,7 +51,7 @@ export interface ListedState {
 }
 
 /** What a terminal's width has no room for in a list. */
-const ONLY_ELSEWHERE = new Set(["u", "cv"]);
+const ONLY_ELSEWHERE = new Set(["u", "cv", "viscosity", "conduct."]);
 
 /** Many states, one a row; outside text the last column says why a row has none. */
 export function stateList(rows: readonly ListedState[], format: TableFormat): string {
