@@ -37,7 +37,7 @@ describe("two values that fix a state", () => {
     [["", "5 bar"]],
   ])("%s is refused in one line", (texts) => {
     expect(() => stateInput(texts)).toThrow(InputError);
-    expect(() => stateInput(texts)).toThrow(/^[^\n]+; expected [^\n]+$/);
+    expect(() => stateInput(texts)).toThrow(/^[^\n]+; (expected|did you mean) [^\n]+$/);
   });
 });
 
