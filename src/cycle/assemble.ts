@@ -1,4 +1,5 @@
 import type { Stream } from "../blocks/stream.js";
+import { drawnOxygen, separatedLiquid, wetAir } from "./composition.js";
 import { NoSteadyState } from "./failure.js";
 import type { Network } from "./network.js";
 import { audit, type Audit } from "./audit.js";
@@ -15,9 +16,10 @@ export type Assembled = Omit<SteadyState, "liquefaction">;
 
 /**
  * Reads a settled network into a result.
+ * @param composition whether to find the oxygen in liquid and vapour of wet air
  * @throws NoSteadyState when the accounts do not close or a block's state is impossible
  */
-export function assemble(network: Network, settled: Settled): Assembled {
+export function assemble(network: Network, settled: Settled, composition: boolean): Assembled {
   const { definition, blocks, inlet } = network;
   for (const { unit } of blocks) {
     const impossible = unit.impossible?.() ?? null;
@@ -25,7 +27,8 @@ export function assemble(network: Network, settled: Settled): Assembled {
   }
   const accounts = audit(network);
   refuseOpenAccounts(accounts);
-  const stations = stationsOf(network, accounts);
+  const ofAir = composition && definition.fluid === "air";
+  const stations = stationsOf(network, accounts, ofAir);
   const coldest = stations.filter(({ massFlow }) => massFlow > 0).reduce((cold, station) => (station.temperature < cold.temperature ? station : cold));
   const loads: LoadResult[] = blocks.flatMap(({ unit }) =>
     unit.refrigeration === undefined ? [] : [{ name: unit.name, ...unit.refrigeration() }],
@@ -48,7 +51,7 @@ export function assemble(network: Network, settled: Settled): Assembled {
     refrigeration: { capacity, loads },
     power,
     performance: performanceOf(network, accounts, capacity, power.net),
-    liquid: network.products.length > 0 ? productOf(network) : liquidOf(stations),
+    liquid: network.products.length > 0 ? productOf(network, ofAir) : liquidOf(stations),
     stations,
     blocks: blocks.map(({ unit }) => ({ name: unit.name, kind: unit.kind, ...unit.figures() })),
     audit: { energy: accounts.energy, exergy: accounts.exergy },
@@ -73,9 +76,13 @@ function refuseOpenAccounts({ residual, energy, exergy, worstBlock }: Audit): vo
 }
 
 /** State points in the order in which the gas passes them. */
-function stationsOf({ definition, labelled, inlet, setting }: Network, accounts: Audit): Station[] {
+function stationsOf(network: Network, accounts: Audit, ofAir: boolean): Station[] {
+  const { definition, labelled, inlet, setting } = network;
+  const equilibriumAt = wetAir();
+  const separated = ofAir ? separatedLiquid(network) : new Set<Stream>();
   const at = (stream: Stream, station: number, after: string): Station => {
     const state = setting.fluid.pressureEnthalpy(stream.pressure, stream.enthalpy, stream.state);
+    const wet = ofAir && !separated.has(stream) ? equilibriumAt(stream.pressure, state.vapourFraction) : null;
     return {
       station,
       after,
@@ -86,6 +93,8 @@ function stationsOf({ definition, labelled, inlet, setting }: Network, accounts:
       density: state.density,
       vapourFraction: Number.isNaN(state.vapourFraction) ? null : state.vapourFraction,
       phase: state.phase,
+      liquidOxygen: wet?.liquid.oxygen ?? null,
+      vapourOxygen: wet?.vapour.oxygen ?? null,
       massFlow: stream.massFlow,
       exergy: accounts.exergyOf(stream),
     };
@@ -127,18 +136,19 @@ function performanceOf({ blocks, setting }: Network, accounts: Audit, capacity: 
 }
 
 /** What is drawn as product. */
-function productOf({ products, inlet }: Network): SteadyState["liquid"] {
+function productOf(network: Network, ofAir: boolean): SteadyState["liquid"] {
+  const { products, inlet } = network;
   const massFlow = products.reduce((sum, stream) => sum + stream.massFlow, 0);
-  return massFlow > 0 ? { massFlow, fractionOfFlow: massFlow / inlet.massFlow, oxygenMoleFraction: null } : null;
+  return massFlow > 0 ? { massFlow, fractionOfFlow: massFlow / inlet.massFlow, oxygenMoleFraction: ofAir ? drawnOxygen(network) : null } : null;
 }
 
 /** The liquid carried by the wettest station. */
 function liquidOf(stations: readonly Station[]): SteadyState["liquid"] {
   let wettest: SteadyState["liquid"] = null;
-  for (const { vapourFraction, massFlow } of stations) {
+  for (const { vapourFraction, massFlow, liquidOxygen } of stations) {
     const fractionOfFlow = 1 - (vapourFraction ?? 1);
     if (fractionOfFlow > (wettest?.fractionOfFlow ?? 0)) {
-      wettest = { massFlow: massFlow * fractionOfFlow, fractionOfFlow, oxygenMoleFraction: null };
+      wettest = { massFlow: massFlow * fractionOfFlow, fractionOfFlow, oxygenMoleFraction: liquidOxygen };
     }
   }
   return wettest;

@@ -20,6 +20,13 @@ export interface Station {
   /** kg/kg; null above the critical pressure, where it has no meaning */
   readonly vapourFraction: number | null;
   readonly phase: Phase;
+  /**
+   * Oxygen in the liquid, mol/mol, of a wet station through which gas of air's composition flows, in equilibrium; null elsewhere, for
+   * other fluids, near the critical pressure, and where it was not asked for.
+   */
+  readonly liquidOxygen: number | null;
+  /** The same of the vapour. */
+  readonly vapourOxygen: number | null;
   /** kg/s */
   readonly massFlow: number;
   /** J/kg, over the surroundings' state */
@@ -107,6 +114,10 @@ export interface SteadyState {
     readonly carnotCop: number | null;
     readonly secondLawEfficiency: number | null;
   };
+  /**
+   * What is drawn, or else the liquid carried by the wettest station. The oxygen in a draw is that of the liquid separated in an open
+   * circuit; in a closed one it is air's, for in the steady state the draw carries away what the make-up brings in.
+   */
   readonly liquid: { readonly massFlow: number; readonly fractionOfFlow: number; readonly oxygenMoleFraction: number | null } | null;
   readonly liquefaction: Liquefaction;
   readonly stations: readonly Station[];

@@ -13,6 +13,8 @@ export interface SolveOptions {
   readonly thresholdOf?: string;
   /** Look whether a colder steady state exists besides. On unless false. */
   readonly lookColder?: boolean;
+  /** Find what liquid and vapour of wet air are made of, some 0.1 ms a wet station. On unless false. */
+  readonly composition?: boolean;
 }
 
 /**
@@ -23,7 +25,7 @@ export interface SolveOptions {
 export function solve(definition: CycleDefinition, options: SolveOptions = {}): SteadyState {
   const network = buildNetwork(definition);
   const settled = settle(network, { lookColder: options.lookColder !== false });
-  const assembled = assemble(network, settled);
+  const assembled = assemble(network, settled, options.composition !== false);
   const margin = liquefactionMargin(network);
   const liquefaction: Liquefaction =
     options.threshold === false

@@ -15,7 +15,7 @@ export type Point =
 /** Solves a cycle file with values in place of those written; what cannot be solved is an answer too. */
 export function solvePoint(file: CycleFile, overrides: readonly Override[]): Point {
   try {
-    return { status: "solved", result: solve(file.define(overrides), { threshold: false, lookColder: false }) };
+    return { status: "solved", result: solve(file.define(overrides), { threshold: false, lookColder: false, composition: false }) };
   } catch (error) {
     if (error instanceof NoSteadyState || error instanceof FluidError) return { status: "no steady state", reason: error.message };
     if (error instanceof InputError) return { status: "not allowed", reason: error.problems.map(({ found, expected }) => `${found}; expected ${expected}`).join("; ") };

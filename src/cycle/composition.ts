@@ -1,0 +1,101 @@
+import type { Stream } from "../blocks/stream.js";
+import { dryAir } from "../fluids/data/air-mixture.js";
+import { argon } from "../fluids/data/argon.js";
+import { nitrogen } from "../fluids/data/nitrogen.js";
+import { oxygen } from "../fluids/data/oxygen.js";
+import type { Equilibrium } from "../fluids/equilibrium.js";
+import { NoConvergenceError } from "../fluids/errors.js";
+import { equilibrium, type Composition } from "../fluids/mixture.js";
+import type { Network } from "./network.js";
+
+/** What liquid and vapour of wet air are made of, mole fractions. */
+export interface WetComposition {
+  readonly liquid: Composition;
+  readonly vapour: Composition;
+}
+
+/** kg/mol, in the order in which the mixture counts its components. */
+const MOLAR_MASSES = [nitrogen.molarMass, argon.molarMass, oxygen.molarMass];
+/** Change of the molar vapour fraction below which it counts as found; each round gains a factor of about thirty. */
+const FOUND = 1e-9;
+const MOST_ROUNDS = 12;
+/** Vapour fractions nearer to 0 or 1 than this are a saturated phase with the solver's round-off. */
+const SATURATED = 1e-9;
+
+const air = Float64Array.of(dryAir.nitrogen, dryAir.argon, dryAir.oxygen);
+
+/**
+ * Liquid and vapour in equilibrium in air, of which a fraction by mass is vapour.
+ *
+ * @returns a function of pressure (Pa) and vapour fraction (kg/kg); it gives null for one phase alone, and near the critical
+ * pressure, where the mixture's equations have no equilibrium
+ */
+export function wetAir(): (pressure: number, vapourFraction: number) => WetComposition | null {
+  let phases: Equilibrium | undefined;
+  return (pressure, vapourFraction) => {
+    if (!(vapourFraction > SATURATED && vapourFraction < 1 - SATURATED)) return null;
+    phases ??= equilibrium(air);
+    try {
+      solve(phases, pressure, vapourFraction);
+    } catch (error) {
+      if (error instanceof NoConvergenceError) return null;
+      throw error;
+    }
+    return { liquid: named(phases.liquid.x), vapour: named(phases.vapour.x) };
+  };
+}
+
+/** Solves at a mass vapour fraction, by rounds over the molar one. */
+function solve(phases: Equilibrium, pressure: number, vapourFraction: number): void {
+  let molar = vapourFraction;
+  for (let round = 0; round < MOST_ROUNDS; round++) {
+    phases.solve(pressure, molar);
+    const next = Math.min(1, (vapourFraction * massOf(air)) / massOf(phases.vapour.x));
+    if (Math.abs(next - molar) < FOUND) return;
+    molar = next;
+  }
+}
+
+/** kg/mol */
+function massOf(x: Float64Array): number {
+  return x.reduce((sum, fraction, i) => sum + fraction * MOLAR_MASSES[i], 0);
+}
+
+function named(x: Float64Array): Composition {
+  return { nitrogen: x[0], argon: x[1], oxygen: x[2] };
+}
+
+/** Streams of the liquid that was separated from its vapour, down to where they leave or are mixed in: they are not of air's composition. */
+export function separatedLiquid({ blocks }: Network): ReadonlySet<Stream> {
+  const found = new Set<Stream>();
+  for (const { separated } of separations(blocks)) {
+    for (let stream: Stream | undefined = separated; stream !== undefined && !found.has(stream); ) {
+      found.add(stream);
+      const reached: Stream = stream;
+      stream = blocks.flatMap(({ ports }) => ports).find(({ inlet }) => inlet === reached)?.outlet;
+    }
+  }
+  return found;
+}
+
+/**
+ * Oxygen in what is drawn, mole fraction; null where it does not follow from one separation.
+ *
+ * In an open circuit it is the liquid that leaves the separation. In a closed one the draw carries away what the make-up brings
+ * in, which is air: the gas that goes round has by then become so much poorer in oxygen.
+ */
+export function drawnOxygen({ definition, blocks }: Network): number | null {
+  const [separation, another] = separations(blocks);
+  if (separation === undefined || another !== undefined) return null;
+  if (definition.circuit === "closed") return dryAir.oxygen;
+  const { pressure, state } = separation.wet;
+  return wetAir()(pressure, state.vapourFraction)?.liquid.oxygen ?? null;
+}
+
+/** Where a branch takes the liquid of a wet stream: its share of the flow follows from the state of the gas. */
+function separations(blocks: Network["blocks"]): { wet: Stream; separated: Stream }[] {
+  return blocks.flatMap(({ kind: { joint }, ports }) => {
+    if (joint?.direction !== "gives" || joint.share !== undefined) return [];
+    return ports.flatMap(({ inlet, branch }) => (branch === undefined ? [] : [{ wet: inlet, separated: branch }]));
+  });
+}
