@@ -1,3 +1,4 @@
+import { boiloff } from "./boiloff.js";
 import { breakeven } from "./breakeven.js";
 import { check } from "./check.js";
 import type { Command } from "./command.js";
@@ -7,4 +8,4 @@ import { state } from "./state.js";
 import { sweep } from "./sweep.js";
 
 /** Every command, in the order in which help lists them. */
-export const commands: readonly Command[] = [run, points, sweep, breakeven, state, check];
+export const commands: readonly Command[] = [run, points, sweep, breakeven, state, boiloff, check];

@@ -47,13 +47,14 @@ export interface OxygenMark {
  * @throws OutOfRangeError, NoConvergenceError where the liquid has no equilibrium at that pressure
  */
 export function boiloff(start: Composition, pressure: number, points = 20): Boiloff {
-  const track = rayleigh(start, pressure);
   const whole = mixture(start);
   const closedAt = (evaporated: number): Remainder => remainder(evaporated, whole.flash({ pressure, vapourFraction: evaporated }));
-  const openAt = (evaporated: number): Remainder => track.at(evaporated);
   const fractions = Array.from({ length: points + 1 }, (_, i) => i / points);
-  const open = fractions.map((evaporated) => openAt(Math.min(evaporated, 1 - LAST_SHARE)));
+  // First, for it checks the range.
   const closed = fractions.map(closedAt);
+  const track = rayleigh(start, pressure);
+  const openAt = (evaporated: number): Remainder => track.at(evaporated);
+  const open = fractions.map((evaporated) => openAt(Math.min(evaporated, 1 - LAST_SHARE)));
   const marks = OXYGEN_MARKS.map((oxygen) => ({
     oxygen,
     open: crossing((evaporated) => openAt(evaporated).liquid.oxygen - oxygen, 1 - LAST_SHARE),
