@@ -1,4 +1,4 @@
-import { cautions } from "./cautions/registry.js";
+import { assessed } from "./cautions/registry.js";
 import type { CycleDefinition } from "./cycle/definition.js";
 import type { CycleResult } from "./cycle/result.js";
 import { solve as solveCycle, type SolveOptions } from "./cycle/solve.js";
@@ -13,7 +13,7 @@ export type { CycleResult } from "./cycle/result.js";
 export type { SolveOptions } from "./cycle/solve.js";
 
 /**
- * The steady state of a cycle, SI units, with the hazards computed from it.
+ * The steady state of a cycle, SI units, with where moisture and carbon dioxide go and the hazards computed from it.
  *
  * @throws NoSteadyState with the block, the quantity and what to change, where the machine has none
  *
@@ -22,6 +22,5 @@ export type { SolveOptions } from "./cycle/solve.js";
  * result.coldEnd.temperature; // K
  */
 export function solve(definition: CycleDefinition, options?: SolveOptions): CycleResult {
-  const steadyState = solveCycle(definition, options);
-  return { ...steadyState, cautions: cautions(steadyState) };
+  return assessed(definition, solveCycle(definition, options));
 }

@@ -1,4 +1,4 @@
-import { cautions } from "../cautions/registry.js";
+import { assessed } from "../cautions/registry.js";
 import type { CycleResult } from "../cycle/result.js";
 import { solve, type SolveOptions } from "../cycle/solve.js";
 import type { Override } from "../cyclefile/define.js";
@@ -10,6 +10,6 @@ import { loadCycleFile } from "../cyclefile/load.js";
  */
 export async function solveFile(path: string, overrides: readonly Override[], options?: SolveOptions): Promise<CycleResult> {
   const cycleFile = await loadCycleFile(path, overrides);
-  const steadyState = solve(cycleFile.define(overrides), options);
-  return { ...steadyState, cautions: cautions(steadyState) };
+  const definition = cycleFile.define(overrides);
+  return assessed(definition, solve(definition, options));
 }

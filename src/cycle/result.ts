@@ -1,5 +1,6 @@
 import type { Warning } from "../blocks/unit.js";
 import type { Phase } from "../fluids/state.js";
+import type { Moisture } from "./moisture-result.js";
 
 /** One state point of the solved cycle. */
 export interface Station {
@@ -136,7 +137,12 @@ export interface Caution {
   readonly figures: Readonly<Record<string, number>>;
 }
 
+/** The steady state with what the gas brings in from the surroundings; null for a fluid that is not taken from there. */
+export interface WithMoisture extends SteadyState {
+  readonly moisture: Moisture | null;
+}
+
 /** What every output shows: the steady state and the hazards computed from it. */
-export interface CycleResult extends SteadyState {
+export interface CycleResult extends WithMoisture {
   readonly cautions: readonly Caution[];
 }

@@ -1,6 +1,6 @@
 import { readdirSync, readFileSync } from "node:fs";
 import { describe, expect, it } from "vitest";
-import { cautions } from "../../src/cautions/registry.js";
+import { assessed } from "../../src/cautions/registry.js";
 import type { CycleResult, Station } from "../../src/cycle/result.js";
 import { NoSteadyState } from "../../src/cycle/failure.js";
 import { solve } from "../../src/cycle/solve.js";
@@ -15,8 +15,8 @@ import { summary } from "../../src/present/summary.js";
 const folder = new URL("../../cycles/", import.meta.url);
 
 function example(file: string): CycleResult {
-  const steadyState = solve(readCycle(readFileSync(new URL(file, folder), "utf8"), { file }));
-  return { ...steadyState, cautions: cautions(steadyState) };
+  const definition = readCycle(readFileSync(new URL(file, folder), "utf8"), { file });
+  return assessed(definition, solve(definition));
 }
 
 const solved = readdirSync(folder).map((file) => [file, example(file)] as const);
