@@ -17,6 +17,8 @@ export interface PassagePoint {
 /** The way of the gas through an entry of the loop. */
 export interface Passage {
   readonly points: readonly PassagePoint[];
+  /** True where the points' places are shares of the duty: an exchanger's side with its profile. */
+  readonly alongDuty?: true;
   /** m3 of the gas's own passage, where the file gives it. */
   readonly volume?: number;
   /** The share of that volume whose filling is asked for. */
@@ -75,7 +77,7 @@ export function profiledPassage(solved: Solved): Passage {
     temperature: warmTemperature,
     pressure: inlet.pressure + dutyFraction * (outlet.pressure - inlet.pressure),
   }));
-  return volume === undefined ? { points } : { points, volume, filled: given(entry, "passage-filled") ?? FILLED };
+  return volume === undefined ? { points, alongDuty: true } : { points, alongDuty: true, volume, filled: given(entry, "passage-filled") ?? FILLED };
 }
 
 /** The share of an exchanger's passage whose filling is asked for, unless the file gives one. */

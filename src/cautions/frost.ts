@@ -16,8 +16,8 @@ export const frost: CautionRecord = {
     return {
       text:
         `Freezes out in ${where}: of each kg of fresh air ${grams(figures.icePerFreshAir)} of ice and ${grams(figures.carbonDioxideFrostPerFreshAir)} of carbon dioxide frost. It closes passages and ` +
-        "nozzles, hits a wheel as grains, and can block the way to a relief valve. Dry the air and take out its carbon dioxide, or thaw in time; a blocked cold section that " +
-        "warms up is a closed vessel, and what thaws in it leaves as more gas than it came.",
+        "nozzles, hits a wheel as grains, and can block the way to a relief valve. Dry the air and take out its carbon dioxide, or thaw in time; a blocked cold section that warms up " +
+        "is a closed vessel.",
       figures: Number.isFinite(soonest) ? { ...figures, fillingTime: soonest } : figures,
     };
   },

@@ -37,7 +37,8 @@ const NEARLY_ALL = 0.99;
  * travels on with the gas until a trap takes it or it freezes; below it, and for carbon dioxide, whatever is more than the gas
  * can hold as vapour stays where it is.
  */
-export function collect({ points }: Passage, incoming: Contents): Collected {
+export function collect(passage: Passage, incoming: Contents): Collected {
+  const { points } = passage;
   let { water } = incoming;
   const taken: Taken[] = [];
   let settling = 0;
@@ -59,9 +60,9 @@ export function collect({ points }: Passage, incoming: Contents): Collected {
   const last = points.at(-1) as PassagePoint;
   const carbonDioxide = Math.min(incoming.carbonDioxide, carbonDioxideAtSaturation(last.temperature, last.pressure));
   const settled: Settled[] = [];
-  if (settling > 0) settled.push(stretch(points, "water", water + settling, settling));
+  if (settling > 0) settled.push(stretch(passage, "water", water + settling, settling));
   const frozen = incoming.carbonDioxide - carbonDioxide;
-  if (frozen > 0) settled.push(stretch(points, "carbonDioxide", incoming.carbonDioxide, frozen));
+  if (frozen > 0) settled.push(stretch(passage, "carbonDioxide", incoming.carbonDioxide, frozen));
   return { contents: { water, carbonDioxide }, taken, settled };
 }
 
@@ -72,7 +73,7 @@ const iceSaturation: Saturation = (temperature, pressure) =>
   temperature < WATER_TRIPLE_TEMPERATURE ? waterAtSaturation(temperature, pressure) : Infinity;
 
 /** Where along the points an amount settles out of what arrives. */
-function stretch(points: readonly PassagePoint[], substance: Substance, arriving: number, amount: number): Settled {
+function stretch({ points, alongDuty }: Passage, substance: Substance, arriving: number, amount: number): Settled {
   const saturation = substance === "water" ? iceSaturation : carbonDioxideAtSaturation;
   const begins = fallsTo(points, arriving, saturation);
   // Only at the triple point is there water that has condensed before and not frozen yet.
@@ -82,8 +83,8 @@ function stretch(points: readonly PassagePoint[], substance: Substance, arriving
     substance,
     amount,
     liquid: arriving - vapour,
-    begins: placeOf(begins),
-    ends: placeOf(fallsTo(points, arriving - NEARLY_ALL * amount, saturation)),
+    begins: placeOf(begins, alongDuty),
+    ends: placeOf(fallsTo(points, arriving - NEARLY_ALL * amount, saturation), alongDuty),
   };
 }
 
@@ -116,6 +117,6 @@ function between(from: PassagePoint, to: PassagePoint, share: number): PassagePo
   };
 }
 
-function placeOf({ place, temperature }: PassagePoint): Place {
-  return { dutyFraction: place, temperature };
+function placeOf({ place, temperature }: PassagePoint, alongDuty = false): Place {
+  return { dutyFraction: alongDuty ? place : null, temperature };
 }

@@ -13,9 +13,9 @@ export interface Amount {
 
 /** A place along a block's passage. */
 export interface Place {
-  /** Share of the duty from the warm end for an exchanger; else 1, the outlet. */
-  readonly dutyFraction: number;
-  /** K */
+  /** Share of the duty from the warm end of an exchanger; null for a block without a profile. */
+  readonly dutyFraction: number | null;
+  /** K; in a block without a profile on a straight line of temperature and pressure from inlet to outlet */
   readonly temperature: number;
 }
 

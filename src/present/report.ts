@@ -2,11 +2,13 @@ import pc from "picocolors";
 import type { CycleResult, ProfilePoint } from "../cycle/result.js";
 import { cautionsText } from "./cautions.js";
 import { blockFigures } from "./figures.js";
+import { moistureText } from "./moisture.js";
 import { fixed, percent, watts } from "./numbers.js";
 import { profileChart } from "./profile-chart.js";
 import { stationTable } from "./stations.js";
 import { summary } from "./summary.js";
 import { textTable } from "./table.js";
+import { wetStations } from "./wet-stations.js";
 import { wrap } from "./wrap.js";
 
 /** All that `run` prints of a result, at most 100 columns wide. */
@@ -23,8 +25,10 @@ export function report(result: CycleResult, colour: boolean): string {
     summary(result),
     warningLines(result),
     section("State points", stationTable(result.stations)),
+    wetStations(result.stations),
     section("Blocks", blockFigures(result.blocks)),
     ...charts,
+    ...(result.moisture === null ? [] : [section("Moisture and carbon dioxide", moistureText(result.moisture))]),
     section("Where the power goes", losses(result)),
     audited(result),
     ...(result.cautions.length === 0 ? [] : [section("Cautions", cautionsText(result.cautions))]),
