@@ -64,7 +64,7 @@ export function settle(network: Network, { lookColder, from: nearer }: SettleOpt
     return { iterations: 1, otherSteadyStates: false, tears: start };
   }
   const capacity = heatCapacity(network);
-  let from = nearer !== undefined && size === enthalpies && isUpper(pass, nearer, change, capacity) ? nearer : start;
+  let from = nearer?.length === size && size === enthalpies && isUpper(pass, nearer, change, capacity) ? nearer : start;
   if (from === start) {
     guarded(pass, () => pass.run(start, change));
     // The flows of a machine without liquid follow from a pass or two; what is assumed of them matters little.

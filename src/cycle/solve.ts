@@ -15,7 +15,15 @@ export interface SolveOptions {
   readonly lookColder?: boolean;
   /** Find what liquid and vapour of wet air are made of, some 0.1 ms a wet station. On unless false. */
   readonly composition?: boolean;
+  /**
+   * A machine like this one, solved before: where every stream of it is as warm as here or warmer, the search sets out from it
+   * and saves the cooling down. Where not, it is passed over, so that the warmest steady state is found all the same.
+   */
+  readonly neighbour?: SteadyState;
 }
+
+/** Where each machine settled, to start its neighbours from. */
+const settledTears = new WeakMap<SteadyState, Float64Array>();
 
 /**
  * The steady state of a machine: of several, the warmest, which a machine cooling down from the surroundings reaches first.
@@ -24,14 +32,17 @@ export interface SolveOptions {
  */
 export function solve(definition: CycleDefinition, options: SolveOptions = {}): SteadyState {
   const network = buildNetwork(definition);
-  const settled = settle(network, { lookColder: options.lookColder !== false });
+  const from = options.neighbour === undefined ? undefined : settledTears.get(options.neighbour);
+  const settled = settle(network, { lookColder: options.lookColder !== false, from });
   const assembled = assemble(network, settled, options.composition !== false);
   const margin = liquefactionMargin(network);
   const liquefaction: Liquefaction =
     options.threshold === false
       ? { reached: margin !== null && margin.margin < 0, margin: margin?.margin ?? null, where: margin?.where ?? null, parameter: "", required: null, reason: "not asked for", given: null }
       : liquefactionThreshold(definition, margin, settled.tears, trial, options.thresholdOf);
-  return { ...assembled, liquefaction };
+  const result = { ...assembled, liquefaction };
+  settledTears.set(result, settled.tears);
+  return result;
 }
 
 function trial(definition: CycleDefinition, from: Float64Array | undefined): Trial {

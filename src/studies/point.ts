@@ -12,10 +12,14 @@ export type Point =
   /** "not allowed" where the values contradict one another, such as a pressure that would rise through an expander. */
   | { readonly status: "no steady state" | "not allowed"; readonly reason: string };
 
-/** Solves a cycle file with values in place of those written; what cannot be solved is an answer too. */
-export function solvePoint(file: CycleFile, overrides: readonly Override[]): Point {
+/**
+ * Solves a cycle file with values in place of those written; what cannot be solved is an answer too.
+ *
+ * @param neighbour a point solved before, to start from where that helps
+ */
+export function solvePoint(file: CycleFile, overrides: readonly Override[], neighbour?: Point): Point {
   try {
-    return { status: "solved", result: solve(file.define(overrides), { threshold: false, lookColder: false, composition: false }) };
+    return { status: "solved", result: solve(file.define(overrides), { threshold: false, lookColder: false, composition: false, ...(neighbour?.status === "solved" ? { neighbour: neighbour.result } : {}) }) };
   } catch (error) {
     if (error instanceof NoSteadyState || error instanceof FluidError) return { status: "no steady state", reason: error.message };
     if (error instanceof InputError) return { status: "not allowed", reason: error.problems.map(({ found, expected }) => `${found}; expected ${expected}`).join("; ") };

@@ -43,8 +43,10 @@ export function sweep(file: CycleFile, swept: readonly Swept[], shown: readonly 
 }
 
 function* rows(file: CycleFile, swept: readonly Swept[], shown: readonly ResultQuantity[], overrides: readonly Override[]): Generator<SweepRow> {
+  let before: Point | undefined;
   for (const values of combinations(swept.map((each) => each.values))) {
-    const point = solvePoint(file, [...overrides, ...values.map((value, i) => swept[i].variable.override(value))]);
+    const point = solvePoint(file, [...overrides, ...values.map((value, i) => swept[i].variable.override(value))], before);
+    before = point;
     yield point.status === "solved"
       ? { values, status: point.status, reason: null, wet: point.result.liquefaction.reached, results: shown.map(({ get }) => get(point.result)) }
       : { values, status: point.status, reason: point.reason, wet: false, results: shown.map(() => null) };

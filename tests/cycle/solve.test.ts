@@ -94,3 +94,23 @@ describe("a machine without a steady state", () => {
     expect(() => solve(warm)).toThrowError(NoSteadyState);
   });
 });
+
+describe("a neighbour to start from", () => {
+  it("changes no digit that counts, whichever way the sweep goes", () => {
+    const efficiencies = [0.25, 0.3, 0.4, 0.5, 0.7, 0.5, 0.4, 0.3, 0.25];
+    let neighbour: ReturnType<typeof solve> | undefined;
+    for (const efficiency of efficiencies) {
+      const definition = benchCooler(efficiency, 0.9, 20);
+      const alone = solve(definition, { threshold: false });
+      neighbour = solve(definition, { threshold: false, ...(neighbour === undefined ? {} : { neighbour }) });
+      expect(neighbour.coldEnd.temperature).toBeCloseTo(alone.coldEnd.temperature, 7);
+    }
+  });
+
+  it("saves passes where the machine gets colder", () => {
+    const neighbour = solve(benchCooler(0.4, 0.9, 20), { threshold: false, lookColder: false });
+    const alone = solve(benchCooler(0.41, 0.9, 20), { threshold: false, lookColder: false });
+    const started = solve(benchCooler(0.41, 0.9, 20), { threshold: false, lookColder: false, neighbour });
+    expect(started.solver.iterations).toBeLessThan(alone.solver.iterations);
+  });
+});
