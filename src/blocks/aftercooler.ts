@@ -3,7 +3,7 @@ import type { BlockKind, Port, Setting } from "./kind.js";
 import { flash, surely } from "./ports.js";
 import { purityClassDewPoint } from "../fluids/air-purity.js";
 import { cooledPassage } from "./passage.js";
-import { pressureAfterDrop, pressureDrop } from "./shared-keys.js";
+import { outletTemperature, pressureAfterDrop, pressureDrop } from "./shared-keys.js";
 import { State } from "../fluids/state.js";
 import type { Unit } from "./unit.js";
 
@@ -15,14 +15,7 @@ export const aftercooler: BlockKind = {
   kind: "aftercooler",
   summary: "Rejects the heat of compression to the surroundings.",
   keys: [
-    {
-      type: "number",
-      name: "outlet-temperature",
-      dimension: "temperature",
-      range: { lowest: 0, open: "lowest" },
-      help: "temperature at which the gas leaves",
-      alternative: "outlet",
-    },
+    outletTemperature("temperature at which the gas leaves", { alternative: "outlet" }),
     {
       type: "number",
       name: "approach",
@@ -85,27 +78,27 @@ export const aftercooler: BlockKind = {
 
 function placeAftercooler({ entry, inlet, outlet }: Port, { fluid, surroundings }: Setting): Unit {
   const scratch = new State();
-  const outletTemperature =
+  const leavesAt =
     given(entry, "outlet-temperature") ?? surroundings.temperature + required(entry, "approach");
   const rejected = (): number => inlet.massFlow * (inlet.enthalpy - outlet.enthalpy);
   return {
     name: entry.name,
     kind: entry.kind,
     evaluate() {
-      outlet.enthalpy = fluid.temperaturePressure(outletTemperature, outlet.pressure, scratch).enthalpy;
+      outlet.enthalpy = fluid.temperaturePressure(leavesAt, outlet.pressure, scratch).enthalpy;
     },
     energyFlows: () => ({
       work: 0,
       drive: 0,
       heat: [{ heat: -rejected(), temperature: surroundings.temperature }],
     }),
-    figures: () => ({ heatRejected: rejected(), outletTemperature, pressureDrop: inlet.pressure - outlet.pressure }),
+    figures: () => ({ heatRejected: rejected(), outletTemperature: leavesAt, pressureDrop: inlet.pressure - outlet.pressure }),
     impossible() {
       const arrives = flash(fluid, inlet).temperature;
-      if (arrives > outletTemperature - IDLE) return null;
+      if (arrives > leavesAt - IDLE) return null;
       return {
         quantity: "outlet-temperature",
-        reason: `the gas arrives at ${arrives.toFixed(2)} K, colder than the ${outletTemperature.toFixed(2)} K at which it is to leave: the cooler would have to heat it.`,
+        reason: `the gas arrives at ${arrives.toFixed(2)} K, colder than the ${leavesAt.toFixed(2)} K at which it is to leave: the cooler would have to heat it.`,
         advice: "Lower the outlet temperature or the approach, or leave the cooler out.",
       };
     },

@@ -4,7 +4,7 @@ import type { BlockKind, Port, Setting } from "./kind.js";
 import { intercooledPassage } from "./passage.js";
 import { surely } from "./ports.js";
 import type { Problem } from "./problem.js";
-import { efficiencyKey } from "./shared-keys.js";
+import { efficiencyKey, outletPressure, pressureRatio, stages, stagesProblems } from "./shared-keys.js";
 import { stageRatio } from "./stages.js";
 import type { Unit } from "./unit.js";
 
@@ -13,35 +13,14 @@ export const compressor: BlockKind = {
   kind: "compressor",
   summary: "Raises the gas's pressure with work, in one stage or in several with cooling between them.",
   keys: [
-    {
-      type: "number",
-      name: "outlet-pressure",
-      dimension: "pressure",
-      range: { lowest: 0, open: "lowest" },
-      help: "pressure behind the last stage",
-      alternative: "pressure",
-    },
-    {
-      type: "number",
-      name: "pressure-ratio",
-      dimension: "fraction",
-      range: { lowest: 1, open: "lowest" },
-      help: "outlet pressure over inlet pressure",
-      alternative: "pressure",
-    },
+    outletPressure,
+    pressureRatio("outlet pressure over inlet pressure"),
     efficiencyKey("efficiency", "isentropic efficiency of each stage", { alternative: "efficiency" }),
     efficiencyKey("polytropic-efficiency", "efficiency of a vanishingly small pressure rise", { alternative: "efficiency" }),
     efficiencyKey("isothermal-efficiency", "isothermal work over real work, for a machine cooled to the surroundings' temperature (or its inlet's, if warmer)", {
       alternative: "efficiency",
     }),
-    {
-      type: "number",
-      name: "stages",
-      dimension: "count",
-      range: { lowest: 1, highest: 20 },
-      help: "stages of equal pressure ratio",
-      default: 1,
-    },
+    stages,
     {
       type: "number",
       name: "intercool-to",
@@ -87,13 +66,9 @@ export const compressor: BlockKind = {
 
 function checkCompressor([entry]: readonly BlockDefinition[], { surroundings }: Pick<Setting, "surroundings">): Problem[] {
   const definition = surely(entry);
-  const problems: Problem[] = [];
+  const problems: Problem[] = stagesProblems(definition);
   const intercoolTo = given(definition, "intercool-to");
-  const stages = given(definition, "stages") ?? 1;
-  if (stages !== Math.round(stages)) {
-    problems.push({ code: "not-whole", entry: definition, key: "stages", found: `${stages}`, expected: "a whole number" });
-  }
-  if (intercoolTo !== undefined && stages < 2) {
+  if (intercoolTo !== undefined && (given(definition, "stages") ?? 1) < 2) {
     problems.push({
       code: "intercooler-without-stages",
       entry: definition,
@@ -116,12 +91,12 @@ function checkCompressor([entry]: readonly BlockDefinition[], { surroundings }: 
 
 function placeCompressor({ entry, inlet, outlet }: Port, setting: Setting): Unit {
   const { fluid, surroundings } = setting;
-  const stages = given(entry, "stages") ?? 1;
+  const count = given(entry, "stages") ?? 1;
   const intercoolTo = given(entry, "intercool-to");
   const intercoolerDrop = given(entry, "intercooler-pressure-drop") ?? 0;
   const driveEfficiency = given(entry, "drive-efficiency") ?? 1;
   const compress: Compression = compression(entry, fluid, surroundings.temperature);
-  const discharges = new Float64Array(stages);
+  const discharges = new Float64Array(count);
   /** J/kg into the gas, and J/kg rejected by jacket and intercoolers, as of the last evaluation. */
   let work = 0;
   let rejected = 0;
@@ -130,11 +105,11 @@ function placeCompressor({ entry, inlet, outlet }: Port, setting: Setting): Unit
   function evaluate(): void {
     let pressure = inlet.pressure;
     let enthalpy = inlet.enthalpy;
-    ratio = stageRatio(inlet.pressure, outlet.pressure, stages, intercoolerDrop);
+    ratio = stageRatio(inlet.pressure, outlet.pressure, count, intercoolerDrop);
     work = 0;
     rejected = 0;
-    for (let stage = 0; stage < stages; stage++) {
-      const last = stage === stages - 1;
+    for (let stage = 0; stage < count; stage++) {
+      const last = stage === count - 1;
       const behind = last ? outlet.pressure : pressure * ratio;
       const step = compress(pressure, enthalpy, behind);
       work += step.work;

@@ -1,8 +1,7 @@
-import { given, required, type BlockDefinition } from "./definition.js";
+import { given, required } from "./definition.js";
 import type { BlockKind, Port, Setting } from "./kind.js";
 import { flash, surely } from "./ports.js";
-import type { Problem } from "./problem.js";
-import { efficiencyKey } from "./shared-keys.js";
+import { efficiencyKey, outletPressure, pressureRatio, stages, stagesProblems } from "./shared-keys.js";
 import { State } from "../fluids/state.js";
 import type { Unit } from "./unit.js";
 
@@ -14,31 +13,10 @@ export const expander: BlockKind = {
   kind: "expander",
   summary: "Expands the gas with work, in one stage or several of equal pressure ratio.",
   keys: [
-    {
-      type: "number",
-      name: "outlet-pressure",
-      dimension: "pressure",
-      range: { lowest: 0, open: "lowest" },
-      help: "pressure behind the last stage",
-      alternative: "pressure",
-    },
-    {
-      type: "number",
-      name: "pressure-ratio",
-      dimension: "fraction",
-      range: { lowest: 1, open: "lowest" },
-      help: "inlet pressure over outlet pressure",
-      alternative: "pressure",
-    },
+    outletPressure,
+    pressureRatio("inlet pressure over outlet pressure"),
     efficiencyKey("efficiency", "isentropic efficiency of each stage's wheel", { required: true }),
-    {
-      type: "number",
-      name: "stages",
-      dimension: "count",
-      range: { lowest: 1, highest: 20 },
-      help: "stages of equal pressure ratio",
-      default: 1,
-    },
+    stages,
     {
       type: "number",
       name: "seal-leak",
@@ -63,7 +41,7 @@ export const expander: BlockKind = {
   ],
   liquefactionKey: "efficiency",
   drivesKey: "drives",
-  check: checkExpander,
+  check: ([entry]) => stagesProblems(surely(entry)),
   pressureChange: "falls",
   outletPressure(entry, inletPressure) {
     const outlet = given(entry, "outlet-pressure");
@@ -73,20 +51,13 @@ export const expander: BlockKind = {
   place: ([port], setting) => placeExpander(surely(port), setting),
 };
 
-function checkExpander([entry]: readonly BlockDefinition[]): Problem[] {
-  const definition = surely(entry);
-  const stages = given(definition, "stages") ?? 1;
-  if (stages === Math.round(stages)) return [];
-  return [{ code: "not-whole", entry: definition, key: "stages", found: `${stages}`, expected: "a whole number" }];
-}
-
 function placeExpander({ entry, inlet, outlet }: Port, { fluid }: Setting): Unit {
-  const stages = given(entry, "stages") ?? 1;
+  const count = given(entry, "stages") ?? 1;
   // What leaks past the wheel keeps its enthalpy, so the mixture behind it has lost that much less.
   const expanded = required(entry, "efficiency") * (1 - (given(entry, "seal-leak") ?? 0));
   const mechanicalEfficiency = given(entry, "mechanical-efficiency") ?? 1;
   const drives = typeof entry.values.drives === "string";
-  const stageRatio = (): number => (inlet.pressure / outlet.pressure) ** (1 / stages);
+  const stageRatio = (): number => (inlet.pressure / outlet.pressure) ** (1 / count);
   const scratch = new State();
   const power = (): number => inlet.massFlow * (inlet.enthalpy - outlet.enthalpy);
   return {
@@ -97,8 +68,8 @@ function placeExpander({ entry, inlet, outlet }: Port, { fluid }: Setting): Unit
       let pressure = inlet.pressure;
       let enthalpy = inlet.enthalpy;
       let state = inlet.state;
-      for (let stage = 1; stage <= stages; stage++) {
-        const behind = stage === stages ? outlet.pressure : pressure / ratio;
+      for (let stage = 1; stage <= count; stage++) {
+        const behind = stage === count ? outlet.pressure : pressure / ratio;
         const entropy = fluid.pressureEnthalpy(pressure, enthalpy, state).entropy;
         const ideal = fluid.pressureEntropy(behind, entropy, scratch).enthalpy;
         enthalpy -= expanded * (enthalpy - ideal);

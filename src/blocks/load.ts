@@ -1,6 +1,7 @@
 import { given } from "./definition.js";
 import type { BlockKind, Port, Setting } from "./kind.js";
 import { flash, surely } from "./ports.js";
+import { outletTemperature } from "./shared-keys.js";
 import { State } from "../fluids/state.js";
 import type { Unit } from "./unit.js";
 
@@ -17,14 +18,7 @@ export const load: BlockKind = {
       help: "heat given to the gas",
       alternative: "duty",
     },
-    {
-      type: "number",
-      name: "outlet-temperature",
-      dimension: "temperature",
-      range: { lowest: 0, open: "lowest" },
-      help: "temperature at which the gas leaves the load; the heat follows",
-      alternative: "duty",
-    },
+    outletTemperature("temperature at which the gas leaves the load; the heat follows", { alternative: "duty" }),
   ],
   alternatives: [{ name: "duty" }],
   figures: [
@@ -40,7 +34,7 @@ export const load: BlockKind = {
 
 function placeLoad({ entry, inlet, outlet }: Port, { fluid }: Setting): Unit {
   const stated = given(entry, "heat");
-  const outletTemperature = given(entry, "outlet-temperature");
+  const leavesAt = given(entry, "outlet-temperature");
   const scratch = new State();
   const heat = (): number => stated ?? inlet.massFlow * (outlet.enthalpy - inlet.enthalpy);
   const refrigeration = () => ({
@@ -53,9 +47,9 @@ function placeLoad({ entry, inlet, outlet }: Port, { fluid }: Setting): Unit {
     kind: entry.kind,
     evaluate() {
       outlet.enthalpy =
-        outletTemperature === undefined
+        leavesAt === undefined
           ? inlet.massFlow > 0 ? inlet.enthalpy + heat() / inlet.massFlow : inlet.enthalpy
-          : fluid.temperaturePressure(outletTemperature, outlet.pressure, scratch).enthalpy;
+          : fluid.temperaturePressure(leavesAt, outlet.pressure, scratch).enthalpy;
     },
     energyFlows() {
       const before = flash(fluid, inlet);
@@ -79,7 +73,7 @@ function placeLoad({ entry, inlet, outlet }: Port, { fluid }: Setting): Unit {
       const arrives = flash(fluid, inlet).temperature;
       return {
         quantity: "outlet-temperature",
-        reason: `the gas arrives at ${arrives.toFixed(2)} K and would have to be cooled, not warmed, to leave at ${outletTemperature?.toFixed(2)} K.`,
+        reason: `the gas arrives at ${arrives.toFixed(2)} K and would have to be cooled, not warmed, to leave at ${leavesAt?.toFixed(2)} K.`,
         advice: `Ask for an outlet temperature above ${arrives.toFixed(2)} K, or make the machine colder.`,
       };
     },

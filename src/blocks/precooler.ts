@@ -1,7 +1,7 @@
 import { required } from "./definition.js";
 import type { BlockKind, Port, Setting } from "./kind.js";
 import { flash, surely } from "./ports.js";
-import { pressureAfterDrop, pressureDrop } from "./shared-keys.js";
+import { outletTemperature, pressureAfterDrop, pressureDrop } from "./shared-keys.js";
 import { State } from "../fluids/state.js";
 import type { Unit } from "./unit.js";
 
@@ -10,14 +10,7 @@ export const precooler: BlockKind = {
   kind: "precooler",
   summary: "Cools the gas below the surroundings with refrigeration bought from outside; its power counts as bought.",
   keys: [
-    {
-      type: "number",
-      name: "outlet-temperature",
-      dimension: "temperature",
-      range: { lowest: 0, open: "lowest" },
-      help: "temperature at which the gas leaves",
-      required: true,
-    },
+    outletTemperature("temperature at which the gas leaves", { required: true }),
     {
       type: "number",
       name: "work-ratio",
@@ -43,14 +36,14 @@ export const precooler: BlockKind = {
 
 function placePrecooler({ entry, inlet, outlet }: Port, { fluid, surroundings }: Setting): Unit {
   const scratch = new State();
-  const outletTemperature = required(entry, "outlet-temperature");
+  const leavesAt = required(entry, "outlet-temperature");
   const workRatio = required(entry, "work-ratio");
   const taken = (): number => inlet.massFlow * (inlet.enthalpy - outlet.enthalpy);
   return {
     name: entry.name,
     kind: entry.kind,
     evaluate() {
-      outlet.enthalpy = fluid.temperaturePressure(outletTemperature, outlet.pressure, scratch).enthalpy;
+      outlet.enthalpy = fluid.temperaturePressure(leavesAt, outlet.pressure, scratch).enthalpy;
     },
     // The heat ends in the surroundings; that it gets there uphill is what the refrigerator's power pays for.
     energyFlows: () => ({
@@ -61,15 +54,15 @@ function placePrecooler({ entry, inlet, outlet }: Port, { fluid, surroundings }:
     figures: () => ({
       heatTaken: taken(),
       refrigeratorPower: taken() * workRatio,
-      outletTemperature,
+      outletTemperature: leavesAt,
       pressureDrop: inlet.pressure - outlet.pressure,
     }),
     impossible() {
       const arrives = flash(fluid, inlet).temperature;
-      if (arrives >= outletTemperature) return null;
+      if (arrives >= leavesAt) return null;
       return {
         quantity: "outlet-temperature",
-        reason: `the gas arrives at ${arrives.toFixed(2)} K, colder than the ${outletTemperature.toFixed(2)} K at which it is to leave.`,
+        reason: `the gas arrives at ${arrives.toFixed(2)} K, colder than the ${leavesAt.toFixed(2)} K at which it is to leave.`,
         advice: "Lower the outlet temperature, or leave the precooler out.",
       };
     },

@@ -1,8 +1,9 @@
 import type { Stream } from "../blocks/stream.js";
 import type { EnergyFlows } from "../blocks/unit.js";
 import { State } from "../fluids/state.js";
-import type { Network, Placed } from "./network.js";
+import type { Network } from "./network.js";
 import { streamsIn, streamsOut } from "./order.js";
+import type { Placed } from "./placed.js";
 
 /** The first- and second-law accounts of a settled network. */
 export interface Audit {

@@ -1,6 +1,6 @@
 import type { BlockKind, Port, Setting } from "../blocks/kind.js";
 import { State } from "../fluids/state.js";
-import type { Placed } from "./network.js";
+import type { Placed } from "./placed.js";
 
 /** What is drawn as product comes back at the compressor's suction, at the surroundings' temperature. */
 const kind: BlockKind = {

@@ -9,15 +9,9 @@ import type { CycleDefinition, Flow } from "./definition.js";
 import { branchGiven, branchTaken, givesProduct, linesOf } from "./lines.js";
 import { makeUp } from "./make-up.js";
 import { evaluationOrder, type Tear } from "./order.js";
+import type { Placed } from "./placed.js";
 import { floatingBlocks, planPressures } from "./plan.js";
 import { staticShares } from "./shares.js";
-
-/** A block in the network, between its streams. */
-export interface Placed {
-  readonly unit: Unit;
-  readonly kind: BlockKind;
-  readonly ports: readonly Port[];
-}
 
 /** A stream with what the gas has just left, for the state-point table. */
 export interface Labelled {

@@ -1,6 +1,6 @@
 import type { Port } from "../blocks/kind.js";
 import type { Stream } from "../blocks/stream.js";
-import type { Placed } from "./network.js";
+import type { Placed } from "./placed.js";
 
 /** A stream that has to be assumed before the block that gives it is evaluated. */
 export interface Tear {

@@ -1,5 +1,5 @@
 import type { Stream } from "../blocks/stream.js";
-import type { Placed } from "./network.js";
+import type { Placed } from "./placed.js";
 
 /**
  * The share of the machine's flow in every stream in which it does not depend on the state of the gas: from the compressor's

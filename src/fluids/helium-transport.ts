@@ -1,6 +1,6 @@
 import type { State } from "./state.js";
 import type { HeliumTransportData } from "./transport-data.js";
-import type { TransportModel } from "./transport.js";
+import type { TransportModel } from "./transport-model.js";
 
 /** K: above it the dilute viscosity follows its own formula. */
 const HOT = 100;

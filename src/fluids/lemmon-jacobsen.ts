@@ -1,7 +1,7 @@
 import type { HelmholtzEquation } from "./helmholtz.js";
 import type { State } from "./state.js";
 import type { LemmonJacobsenData, TransportTerm } from "./transport-data.js";
-import type { TransportModel } from "./transport.js";
+import type { TransportModel } from "./transport-model.js";
 
 /** Chapman-Enskog: viscosity in Pa s from sqrt(M T) / (sigma^2 Omega), M in g/mol, T in K, sigma in nm. */
 const CHAPMAN_ENSKOG = 2.66958e-8;
