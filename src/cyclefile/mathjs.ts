@@ -70,6 +70,6 @@ export const MINUTE = "minute";
 export const unitValues = new Map<string, MathType>([["pi", Math.PI]]);
 for (const [name, [factor, unit]] of Object.entries(ATOMS)) unitValues.set(name === "min" ? MINUTE : name, math.unit(factor, unit));
 for (const [name, { kind, factor, offset, gauge }] of Object.entries(units)) {
-  if (kind === "fraction" || !/^\w+$/.test(name) || offset !== undefined || gauge !== undefined) continue;
-  unitValues.set(name, math.unit(factor, SI_UNIT[kind]));
+  if (!/^\w+$/.test(name) || offset !== undefined || gauge !== undefined) continue;
+  unitValues.set(name, kind === "fraction" ? factor : math.unit(factor, SI_UNIT[kind]));
 }

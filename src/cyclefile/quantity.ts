@@ -84,7 +84,7 @@ export function fits(kind: UnitKind, measure: Measure): boolean {
 
 /** What a measure accepts, in words: "a pressure: Pa, bar, psi, …". */
 export function accepted(measure: Measure): string {
-  if (measure === "fraction") return "a bare number or a percentage";
+  if (measure === "fraction") return `a bare number, or one in ${unitNames(["fraction"]).join(" or ")}`;
   if (measure === "count") return "a bare number";
   if (measure === "temperature difference") return "a temperature difference in K";
   const kinds = kindsFor(measure);
@@ -97,7 +97,7 @@ export function accepted(measure: Measure): string {
  */
 export function misfit({ kind, unit, scale }: Quantity, measure: Measure): { found: string; expected: string } | null {
   if (!fits(kind, measure)) {
-    return { found: kind !== "fraction" ? `a ${kind}` : unit === undefined ? "a number without a unit" : "a percentage", expected: accepted(measure) };
+    return { found: kind !== "fraction" ? `a ${kind}` : unit === undefined ? "a number without a unit" : `a number in ${unit}`, expected: accepted(measure) };
   }
   if (measure === "temperature difference") {
     if (scale === "point") return { found: "a place on a temperature scale", expected: `${accepted(measure)}; degC and degF have a zero of their own, and a difference has none` };
@@ -107,6 +107,6 @@ export function misfit({ kind, unit, scale }: Quantity, measure: Measure): { fou
   if ((measure === "temperature" || measure === "pressure") && scale === "difference") {
     return { found: `the difference of two ${measure}s`, expected: `a ${measure}` };
   }
-  if (measure === "count" && unit === "%") return { found: "a percentage", expected: accepted(measure) };
+  if (measure === "count" && unit !== undefined) return { found: `a number in ${unit}`, expected: accepted(measure) };
   return null;
 }

@@ -34,7 +34,8 @@ function roleOf(node: MathNode, named: (name: string) => Quantity | undefined): 
   if (isParenthesisNode(node)) return roleOf(node.content, named);
   if (isSymbolNode(node)) {
     const quantity = named(node.name);
-    if (quantity?.kind === "fraction") return "number";
+    const kind = quantity?.kind ?? (Object.hasOwn(units, node.name) ? units[node.name].kind : undefined);
+    if (kind === "fraction") return "number";
     return quantity?.scale ?? "either";
   }
   if (isFunctionNode(node)) {
