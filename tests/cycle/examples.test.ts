@@ -48,6 +48,31 @@ describe("the examples", () => {
     expect(coldEnd.temperature).toBeLessThan(95);
   });
 
+  it("nitrogen-loop holds its plate between 90 and 100 K, dry, and condenses once the plate's load is small", () => {
+    const { stations, refrigeration, liquid, liquefaction } = example("nitrogen-loop");
+    expect(refrigeration.loads[0].inletTemperature).toBeGreaterThan(90);
+    expect(refrigeration.loads[0].outletTemperature).toBeLessThan(105);
+    expect(refrigeration.capacity).toBe(300);
+    for (const { phase, after } of stations) expect(phase, after).not.toBe("two-phase");
+    expect([liquid, liquefaction.reached]).toEqual([null, false]);
+    expect(example("nitrogen-loop", { "L1.heat": "150 W" }).liquefaction.reached).toBe(true);
+  });
+
+  it("helium-loop cools its sample below 40 K, far above where helium condenses", () => {
+    const { coldEnd, stations, refrigeration, liquid, liquefaction } = example("helium-loop");
+    expect(coldEnd.temperature).toBeLessThan(36);
+    expect(coldEnd.temperature).toBeGreaterThan(25);
+    expect(refrigeration.loads[0].outletTemperature).toBeLessThan(40);
+    expect(liquid).toBeNull();
+    expect(liquefaction).toMatchObject({ reached: false, margin: null });
+    for (const { phase, after } of stations) expect(["gas", "supercritical"], after).toContain(phase);
+    // Every expander cools what passes it.
+    for (const name of ["T1", "T2"]) {
+      const at = stations.findIndex(({ after }) => after === name);
+      expect(stations[at].temperature).toBeLessThan(stations[at - 1].temperature);
+    }
+  });
+
   it("throttle-cooler liquefies without an expander, and is lost when the load is too large", () => {
     expect(example("throttle-cooler").liquefaction).toMatchObject({ reached: true, required: null });
     expect(example("throttle-cooler", { "L1.heat": "25 W" }).coldEnd.temperature).toBeGreaterThan(250);
