@@ -10,6 +10,8 @@ import { solve } from "../../src/cycle/solve.js";
 import { fluidNames } from "../../src/fluids/registry.js";
 import type { Fluid } from "../../src/fluids/fluid.js";
 import { State } from "../../src/fluids/state.js";
+import { dryAir } from "../../src/fluids/data/air-mixture.js";
+import { mixture } from "../../src/fluids/mixture.js";
 
 const ROUNDS = 15;
 const STATES = 400;
@@ -99,8 +101,22 @@ for (const name of fluidNames) {
 }
 
 print("");
+print("Mixture flash of air, us (ratio); pressures from 0.5 to 30 bar in no order");
+print("                  p,x              bubble point");
+{
+  const next = sequence();
+  const wet = mixture(dryAir);
+  const cases = Array.from({ length: STATES }, () => ({ pressure: 5e4 * (3e6 / 5e4) ** next(), vapourFraction: next() }));
+  const figures = [
+    microseconds(cases.length, () => cases.forEach((each) => wet.flash(each))),
+    microseconds(cases.length, () => cases.forEach(({ pressure }) => wet.bubblePoint(pressure))),
+  ];
+  print(`air       ${figures.map(figure).join(" ")}`);
+}
+
+print("");
 print("Solutions, ms (ratio)");
-for (const file of ["bench-cooler", "two-expanders", "workshop-air"]) {
+for (const file of ["bench-cooler", "two-expanders", "workshop-air", "nitrogen-loop", "helium-loop"]) {
   const definition = readCycle(readFileSync(`cycles/${file}.yaml`, "utf8"));
   const alone = microseconds(20, () => {
     for (let i = 0; i < 20; i++) solve(definition, { threshold: false });
