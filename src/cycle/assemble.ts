@@ -1,5 +1,5 @@
 import type { Stream } from "../blocks/stream.js";
-import { drawnOxygen, separatedLiquid, wetAir } from "./composition.js";
+import { drawnLiquidWarnings, drawnOxygen, separatedLiquid, wetAir } from "./composition.js";
 import { NoSteadyState } from "./failure.js";
 import type { Network } from "./network.js";
 import { audit, type Audit } from "./audit.js";
@@ -56,7 +56,7 @@ export function assemble(network: Network, settled: Settled, composition: boolea
     blocks: blocks.map(({ unit }) => ({ name: unit.name, kind: unit.kind, ...unit.figures() })),
     audit: { energy: accounts.energy, exergy: accounts.exergy },
     exergy: accounts.destroyed,
-    warnings: blocks.flatMap(({ unit }) => unit.warnings?.() ?? []),
+    warnings: [...blocks.flatMap(({ unit }) => unit.warnings?.() ?? []), ...drawnLiquidWarnings(network)],
   };
 }
 

@@ -1,4 +1,5 @@
 import type { Stream } from "../blocks/stream.js";
+import type { Warning } from "../blocks/unit.js";
 import { dryAir } from "../fluids/data/air-mixture.js";
 import { argon } from "../fluids/data/argon.js";
 import { nitrogen } from "../fluids/data/nitrogen.js";
@@ -90,6 +91,21 @@ export function drawnOxygen({ definition, blocks }: Network): number | null {
   if (definition.circuit === "closed") return dryAir.oxygen;
   const { pressure, state } = separation.wet;
   return wetAir()(pressure, state.vapourFraction)?.liquid.oxygen ?? null;
+}
+
+/** What the state points leave out where liquid is drawn from a closed circuit of air. */
+export function drawnLiquidWarnings({ definition, blocks, products }: Network): Warning[] {
+  const isDrawn = products.some(({ massFlow }) => massFlow > 0) && separations(blocks).length > 0;
+  if (definition.fluid !== "air" || definition.circuit === "open" || !isDrawn) return [];
+  return [
+    {
+      code: "composition-drifts",
+      block: null,
+      message:
+        "the first liquid drawn is richer in oxygen than air, and the gas left in the loop grows poorer in it until the liquid holds no " +
+        "more than the make-up brings in, 21 %. The state points are those of air throughout.",
+    },
+  ];
 }
 
 /** Where a branch takes the liquid of a wet stream: its share of the flow follows from the state of the gas. */

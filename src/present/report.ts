@@ -2,12 +2,12 @@ import pc from "picocolors";
 import type { CycleResult, ProfilePoint } from "../cycle/result.js";
 import { cautionsText } from "./cautions.js";
 import { blockFigures } from "./figures.js";
+import { lossTable } from "./losses.js";
 import { moistureText } from "./moisture.js";
-import { fixed, percent, watts } from "./numbers.js";
+import { fixed } from "./numbers.js";
 import { profileChart } from "./profile-chart.js";
 import { stationTable } from "./stations.js";
 import { summary } from "./summary.js";
-import { textTable } from "./table.js";
 import { wetStations } from "./wet-stations.js";
 import { wrap } from "./wrap.js";
 
@@ -23,13 +23,13 @@ export function report(result: CycleResult, colour: boolean): string {
   return [
     `${bold(wrap(result.title))}\n${setting}`,
     summary(result),
-    warningLines(result),
+    warningLines(result, colour),
     section("State points", stationTable(result.stations)),
     wetStations(result.stations),
     section("Blocks", blockFigures(result.blocks)),
     ...charts,
     ...(result.moisture === null ? [] : [section("Moisture and carbon dioxide", moistureText(result.moisture))]),
-    section("Where the power goes", losses(result)),
+    section("Where the power goes", lossTable(result.exergy)),
     audited(result),
     ...(result.cautions.length === 0 ? [] : [section("Cautions", cautionsText(result.cautions))]),
   ]
@@ -37,28 +37,10 @@ export function report(result: CycleResult, colour: boolean): string {
     .join("\n\n");
 }
 
-/** Longest bar of the table of losses. */
-const BAR = 40;
-
-function losses({ exergy }: CycleResult): string {
-  const rows = exergy
-    .filter(({ share }) => share >= 5e-4)
-    .toSorted((a, b) => b.destroyed - a.destroyed)
-    .map(({ block, destroyed, share }) => [block, watts(destroyed), percent(share), "#".repeat(Math.round(share * BAR))]);
-  return textTable(
-    [
-      { heading: "exergy lost in", align: "left" },
-      { heading: "", unit: "" },
-      { heading: "share" },
-      { heading: "", align: "left" },
-    ],
-    rows,
-  );
-}
-
 /** What the user should know before reading on. */
-function warningLines({ solver, warnings }: CycleResult): string {
-  const lines = warnings.map(({ message, block }) => wrap(`Warning${block === null ? "" : `, ${block}`}: ${message}`));
+function warningLines({ solver, warnings }: CycleResult, colour: boolean): string {
+  const { yellow } = pc.createColors(colour);
+  const lines = warnings.map(({ message, block }) => wrap(`Warning${block === null ? "" : `, ${block}`}: ${message}`).replace("Warning", yellow("Warning")));
   if (solver.otherSteadyStates) {
     lines.push(wrap("A colder steady state exists too; this is the warmest, which a machine cooling down from the surroundings reaches first."));
   }

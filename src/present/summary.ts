@@ -37,8 +37,10 @@ function liquefaction({ liquefaction: found, liquid }: CycleResult): Line {
 function condition({ reached, margin, where }: CycleResult["liquefaction"], liquid: CycleResult["liquid"]): string {
   if (margin === null) return "no: no station lies below the critical pressure";
   if (!reached) return `no: behind ${where}, where it is nearest, the gas stays ${fixed(margin / 1e3, 2)} kJ/kg above its dew point`;
-  const amount = liquid === null ? "" : `, ${significant(liquid.massFlow * 1e3, 3)} g/s of it (${percent(liquid.fractionOfFlow)} of the flow)`;
-  return `yes: liquid forms behind ${where}${amount}`;
+  if (liquid === null) return `yes: liquid forms behind ${where}`;
+  const { massFlow, fractionOfFlow, oxygenMoleFraction } = liquid;
+  const oxygen = oxygenMoleFraction === null ? "" : `; the liquid holds ${percent(oxygenMoleFraction, 0)} oxygen`;
+  return `yes: liquid forms behind ${where}, ${significant(massFlow * 1e3, 3)} g/s of it (${percent(fractionOfFlow)} of the flow)${oxygen}`;
 }
 
 function threshold({ required, given, reason, parameter }: CycleResult["liquefaction"]): string {
