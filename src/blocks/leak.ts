@@ -1,8 +1,11 @@
 import type { Warning } from "./unit.js";
 
+/** K by which gas may be warmer than the surroundings and count as being as warm. */
+const AS_WARM = 0.05;
+
 /** A warning where a stated heat leak would have to come into gas warmer than the surroundings. */
 export function leakWarnings(block: string, leak: number, gasTemperature: number, surroundingsTemperature: number): Warning[] {
-  if (leak === 0 || gasTemperature <= surroundingsTemperature) return [];
+  if (leak === 0 || gasTemperature <= surroundingsTemperature + AS_WARM) return [];
   return [
     {
       code: "leak-into-warm-gas",

@@ -63,7 +63,7 @@ export function coolTogether(pass: Pass, start: Float64Array, firstChange: Float
     x = next;
     change = changeNext;
   }
-  throw unsettled(pass, best);
+  throw unsettled(pass, change);
 }
 
 /** The machine's own passes, one after another. */

@@ -76,6 +76,14 @@ export class Pass {
     }
   }
 
+  /** What an unknown belongs to: the block behind which its stream stands, or the block whose pressure floats. */
+  nameOf(unknown: number): string {
+    const { torn, tornFlows, network } = this;
+    const stream = torn[unknown] ?? tornFlows[unknown - torn.length];
+    if (stream === undefined) return network.floating[unknown - torn.length - tornFlows.length].name;
+    return network.labelled.find((each) => each.stream === stream)?.after ?? "the intake";
+  }
+
   get fluid(): Network["setting"]["fluid"] {
     return this.network.setting.fluid;
   }

@@ -27,11 +27,13 @@ export function outOfRange(pass: Pass, error: OutOfRangeError): NoSteadyState {
 }
 
 /** No fixed point in as many passes as are tried. */
-export function unsettled(pass: Pass, drift: number): NoSteadyState {
+export function unsettled(pass: Pass, change: Float64Array): NoSteadyState {
+  let worst = 0;
+  for (let i = 1; i < change.length; i++) if (Math.abs(change[i]) > Math.abs(change[worst])) worst = i;
   return new NoSteadyState(
-    null,
+    pass.nameOf(worst),
     "balance",
-    `no steady state was found in ${pass.count} passes; the nearest still drifted by ${drift.toPrecision(2)} J/kg a pass.`,
+    `no steady state was found in ${pass.count} passes; the stream behind it still drifted by ${Math.abs(change[worst]).toPrecision(2)} J/kg a pass.`,
     "Change a pressure or an efficiency a little and run again.",
   );
 }

@@ -85,7 +85,7 @@ export function settle(network: Network, { lookColder, from: nearer }: SettleOpt
       return { iterations: pass.count, otherSteadyStates, tears: x };
     }
     // An exchanger has found on the way that it must be summed in finer pieces, and keeps to that from now on.
-    if (attempt === MOST_ATTEMPTS) throw unsettled(pass, largest(change));
+    if (attempt === MOST_ATTEMPTS) throw unsettled(pass, change);
     from = x.map((value, i) => value + NOT_ALL_THE_WAY * (start[i] - value));
     guarded(pass, () => pass.run(from, change));
     if (change.some((value) => value > 0)) {
@@ -155,7 +155,7 @@ function coolOneTear(pass: Pass, start: Float64Array, change: Float64Array, capa
     changeHere = changeNext;
   }
   // The bracket closes on a jump of the change as well as on a root of it; a jump is no steady state.
-  if (Math.abs(changeHere) > 1e3 * settled) throw unsettled(pass, Math.abs(changeHere));
+  if (Math.abs(changeHere) > 1e3 * settled) throw unsettled(pass, Float64Array.of(changeHere));
   x[0] = here;
   return x;
 }

@@ -35,6 +35,13 @@ function branchProblems(definition: CycleDefinition): Problem[] {
     }
     met.set(name, entry);
   }
+  for (const { entries } of linesOf(definition)) {
+    for (const [index, entry] of entries.entries()) {
+      const name = branchTaken(entry);
+      if (name === undefined || !entries.slice(index + 1).some((later) => branchGiven(later) === name)) continue;
+      problems.push({ code: "mixer-before-splitter", entry, found: `branch ${name} coming back here, before it leaves further down`, expected: "the mixer behind the block that gives the branch (a closed loop may be written from any block on)" });
+    }
+  }
   const reached = new Set(linesOf(definition).flatMap(({ branch }) => branch ?? []));
   for (const name of names) {
     const [first] = branches[name];

@@ -37,5 +37,5 @@ describe(`${MACHINES} random machines with branches, boosters and separators in 
     process.stdout.write(`battery: ${JSON.stringify(counts)}\n`);
     expect(counts.solved).toBeGreaterThan(0.5 * MACHINES);
     expect(counts.unsettled).toBe(0);
-  });
+  }, 120_000);
 });

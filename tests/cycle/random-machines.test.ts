@@ -119,5 +119,5 @@ describe("a random legal machine", () => {
     );
     process.stdout.write(`random machines: ${counts.solved} solved, ${counts.refused} refused with a reason\n`);
     expect(counts.solved).toBeGreaterThan(120);
-  });
+  }, 300_000);
 });

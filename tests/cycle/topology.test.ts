@@ -43,6 +43,7 @@ describe("a machine with a wrong topology", () => {
   it.each([
     ["a branch that never returns and is no product", without("mixer:"), "branch-never-returns", 17],
     ["a branch into which nothing flows", without("splitter:").replace(/ {2}- mixer.*\n/, ""), "branch-never-leaves", 16],
+    ["a mixer before its splitter", without("mixer:").replace("  - splitter:", "  - mixer:       { name: M1, branch: turbine }\n  - splitter:"), "mixer-before-splitter", 9],
     ["a mixer for a branch that is not written", SOUND.replace("name: M1, branch: turbine", "name: M1, branch: turbin"), "no-such-branch", 13],
     ["a branch that leaves twice", SOUND.replace("  - valve:", "  - splitter:    { name: S2, branch: turbine, fraction: 10 % }\n  - valve:"), "branch-twice", 11],
     ["an exchanger with both sides at one place", SOUND.replace("{ name: HX2, side: cold }", "{ name: HX2, side: warm, effectiveness: 0.9 }"), "side-twice", 14],
