@@ -8,6 +8,8 @@ export interface Surroundings {
   readonly pressure: number;
   /** 0 to 1 */
   readonly relativeHumidity: number;
+  /** mol/mol of dry air; left out, 420e-6 */
+  readonly carbonDioxide?: number;
 }
 
 /** The flow at the compressor's inlet. A volume there becomes a mass only once the inlet state is known. */

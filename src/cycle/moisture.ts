@@ -17,23 +17,13 @@ const SOLID_DENSITY: Readonly<Record<Substance, number>> = { water: 917, carbonD
 /** What settles in a block is not reported below this share of what the fresh air brings. */
 const TRACE = 1e-6;
 
-/** Settings of the surrounding air beside the definition's. */
-export interface MoistureOptions {
-  /** mol/mol of dry air */
-  readonly carbonDioxide?: number;
-}
-
 /**
  * Where the water and carbon dioxide of the surrounding air go in a solved machine; null for a fluid that is not taken from the
  * surroundings. What has settled is taken to stay: nothing is blown on, melted or taken up again by the returning gas.
  */
-export function moisture(
-  definition: CycleDefinition,
-  state: SteadyState,
-  { carbonDioxide = ATMOSPHERIC_CARBON_DIOXIDE }: MoistureOptions = {},
-): Moisture | null {
+export function moisture(definition: CycleDefinition, state: SteadyState): Moisture | null {
   if (definition.fluid !== "air") return null;
-  const { temperature, pressure, relativeHumidity } = definition.surroundings;
+  const { temperature, pressure, relativeHumidity, carbonDioxide = ATMOSPHERIC_CARBON_DIOXIDE } = definition.surroundings;
   const fresh: Contents = { water: humidityRatio(temperature, pressure, relativeHumidity), carbonDioxide };
   const madeUp = state.blocks.map(({ makeUpFlow }) => makeUpFlow).find((flow) => typeof flow === "number" && flow > 0) as number | undefined;
   const source = definition.circuit === "open" ? "intake" : madeUp === undefined ? "first fill" : "make-up";

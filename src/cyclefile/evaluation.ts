@@ -34,10 +34,10 @@ export class Evaluation implements Scope {
     private readonly evaluate: Evaluate | undefined,
   ) {
     for (const name of raw.let.keys()) this.get(name);
-    const [temperature, pressure, relativeHumidity] = surroundingsKeys.map(({ name }) =>
+    const [temperature, pressure, relativeHumidity, carbonDioxide] = surroundingsKeys.map(({ name }) =>
       name === "pressure" ? this.surroundingsPressure() : this.surrounding(name),
     );
-    this.surroundings = { temperature, pressure, relativeHumidity };
+    this.surroundings = { temperature, pressure, relativeHumidity, carbonDioxide };
   }
 
   get(name: string): Quantity | null | undefined {

@@ -12,7 +12,7 @@ import { meaning } from "./vocabulary.js";
 const EXPECTED: Readonly<Record<string, string>> = {
   title: "a line of text",
   fluid: `the name of a fluid: ${fluidNames.join(", ")}`,
-  surroundings: "a map of temperature, pressure and relative-humidity",
+  surroundings: "a map of temperature, pressure, relative-humidity and carbon-dioxide",
   circuit: "closed or open",
   flow: "a flow, as in 6 g/s or 250 L/min",
   let: "names with a value each, as in { p_high: 8 bar }",

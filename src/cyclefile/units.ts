@@ -35,6 +35,7 @@ const HOUR = 3600;
 /** Every unit there is, by the name that a cycle file writes. */
 export const units: Readonly<Record<string, Unit>> = {
   "%": { kind: "fraction", factor: 0.01 },
+  ppm: { kind: "fraction", factor: 1e-6 },
 
   K: { kind: "temperature", factor: 1 },
   degC: { kind: "temperature", factor: 1, offset: 273.15 },

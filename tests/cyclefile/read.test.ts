@@ -10,7 +10,7 @@ describe("a cycle file", () => {
     expect(rest).toEqual({
       title: "Bench cooler for a detector stage",
       fluid: "air",
-      surroundings: { temperature: 295.15, pressure: 101325, relativeHumidity: 0.5 },
+      surroundings: { temperature: 295.15, pressure: 101325, relativeHumidity: 0.5, carbonDioxide: 420e-6 },
       circuit: "closed",
       flow: { kind: "mass", value: 0.006 },
       branches: {},
@@ -31,7 +31,7 @@ describe("a cycle file", () => {
 
   it("is surrounded by 20 degC, 1 atm, 50 % where it does not say", () => {
     const without = changed(bench, ["surroundings: { temperature: 22 degC, pressure: 1 atm, relative-humidity: 50 % }\n", ""]);
-    expect(readCycle(without).surroundings).toEqual({ temperature: 293.15, pressure: 101325, relativeHumidity: 0.5 });
+    expect(readCycle(without).surroundings).toEqual({ temperature: 293.15, pressure: 101325, relativeHumidity: 0.5, carbonDioxide: 420e-6 });
   });
 
   it("may leave out title and circuit, and be written in any order", () => {
