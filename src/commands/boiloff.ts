@@ -68,10 +68,9 @@ async function sourceOf(input: Input, terminal: Terminal): Promise<Source | null
   const { fluid, stations, surroundings, liquefaction } = await solveFile(name, await settingsOf(input), { threshold: false });
   if (fluid !== "air") await refuse(name, fluid);
   const { wetAir } = await import("../cycle/composition.js");
-  const equilibriumAt = wetAir();
   const wet = stations.flatMap((station) => {
     const { vapourFraction, liquidOxygen, pressure } = station;
-    const composition = liquidOxygen === null || vapourFraction === null ? null : equilibriumAt(pressure, vapourFraction);
+    const composition = liquidOxygen === null || vapourFraction === null ? null : wetAir(pressure, vapourFraction);
     return composition === null || vapourFraction === null ? [] : [{ station, vapourFraction, liquid: composition.liquid }];
   });
   if (wet.length === 0) {

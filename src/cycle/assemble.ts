@@ -78,11 +78,10 @@ function refuseOpenAccounts({ residual, energy, exergy, worstBlock }: Audit): vo
 /** State points in the order in which the gas passes them. */
 function stationsOf(network: Network, accounts: Audit, ofAir: boolean): Station[] {
   const { definition, labelled, inlet, setting } = network;
-  const equilibriumAt = wetAir();
   const separated = ofAir ? separatedLiquid(network) : new Set<Stream>();
   const at = (stream: Stream, station: number, after: string): Station => {
     const state = setting.fluid.pressureEnthalpy(stream.pressure, stream.enthalpy, stream.state);
-    const wet = ofAir && !separated.has(stream) ? equilibriumAt(stream.pressure, state.vapourFraction) : null;
+    const wet = ofAir && !separated.has(stream) ? wetAir(stream.pressure, state.vapourFraction) : null;
     return {
       station,
       after,

@@ -17,43 +17,47 @@ export interface WetComposition {
 
 /** kg/mol, in the order in which the mixture counts its components. */
 const MOLAR_MASSES = [nitrogen.molarMass, argon.molarMass, oxygen.molarMass];
-/** Change of the molar vapour fraction below which it counts as found; each round gains a factor of about thirty. */
-const FOUND = 1e-9;
+/** Error of the molar vapour fraction below which it counts as found. */
+const FOUND = 1e-6;
 const MOST_ROUNDS = 12;
 /** Vapour fractions nearer to 0 or 1 than this are a saturated phase with the solver's round-off. */
 const SATURATED = 1e-9;
 
 const air = Float64Array.of(dryAir.nitrogen, dryAir.argon, dryAir.oxygen);
+/** Made once, at the first wet station: it takes longer than to solve it. */
+let made: Equilibrium | undefined;
 
 /**
- * Liquid and vapour in equilibrium in air, of which a fraction by mass is vapour.
+ * Liquid and vapour in equilibrium in air of which a fraction by mass is vapour; null for one phase alone, and near the critical
+ * pressure, where the mixture's equations have no equilibrium.
  *
- * @returns a function of pressure (Pa) and vapour fraction (kg/kg); it gives null for one phase alone, and near the critical
- * pressure, where the mixture's equations have no equilibrium
+ * @param pressure Pa
+ * @param vapourFraction kg/kg
  */
-export function wetAir(): (pressure: number, vapourFraction: number) => WetComposition | null {
-  let phases: Equilibrium | undefined;
-  return (pressure, vapourFraction) => {
-    if (!(vapourFraction > SATURATED && vapourFraction < 1 - SATURATED)) return null;
-    phases ??= equilibrium(air);
-    try {
-      solve(phases, pressure, vapourFraction);
-    } catch (error) {
-      if (error instanceof NoConvergenceError) return null;
-      throw error;
-    }
-    return { liquid: named(phases.liquid.x), vapour: named(phases.vapour.x) };
-  };
+export function wetAir(pressure: number, vapourFraction: number): WetComposition | null {
+  if (!(vapourFraction > SATURATED && vapourFraction < 1 - SATURATED)) return null;
+  const phases = (made ??= equilibrium(air));
+  phases.forget();
+  try {
+    solve(phases, pressure, vapourFraction);
+  } catch (error) {
+    if (error instanceof NoConvergenceError) return null;
+    throw error;
+  }
+  return { liquid: named(phases.liquid.x), vapour: named(phases.vapour.x) };
 }
 
-/** Solves at a mass vapour fraction, by rounds over the molar one. */
+/** Solves at a mass vapour fraction: the molar one by the secant method, from where the two are equal. */
 function solve(phases: Equilibrium, pressure: number, vapourFraction: number): void {
   let molar = vapourFraction;
+  let [before, excessBefore] = [NaN, NaN];
   for (let round = 0; round < MOST_ROUNDS; round++) {
     phases.solve(pressure, molar);
-    const next = Math.min(1, (vapourFraction * massOf(air)) / massOf(phases.vapour.x));
-    if (Math.abs(next - molar) < FOUND) return;
-    molar = next;
+    const excess = (vapourFraction * massOf(air)) / massOf(phases.vapour.x) - molar;
+    if (Math.abs(excess) < FOUND) return;
+    const slope = round === 0 ? -1 : (excess - excessBefore) / (molar - before);
+    [before, excessBefore] = [molar, excess];
+    molar = Math.min(1, Math.max(0, molar - excess / slope));
   }
 }
 
@@ -90,7 +94,7 @@ export function drawnOxygen({ definition, blocks }: Network): number | null {
   if (separation === undefined || another !== undefined) return null;
   if (definition.circuit === "closed") return dryAir.oxygen;
   const { pressure, state } = separation.wet;
-  return wetAir()(pressure, state.vapourFraction)?.liquid.oxygen ?? null;
+  return wetAir(pressure, state.vapourFraction)?.liquid.oxygen ?? null;
 }
 
 /** What the state points leave out where liquid is drawn from a closed circuit of air. */

@@ -82,6 +82,11 @@ export class Equilibrium {
     throw new NoConvergenceError("mixture", `phase equilibrium at ${pressure} Pa and vapour fraction ${vapourFraction}`);
   }
 
+  /** Makes the next solution start afresh, so that it is the same whatever was solved before. */
+  forget(): void {
+    this.pressure = NaN;
+  }
+
   /** Corresponding-states K and the temperature at which they meet the material balance. */
   private guess(pressure: number, vapourFraction: number): void {
     const { guesses, z, logK, size } = this;
