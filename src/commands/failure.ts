@@ -23,7 +23,7 @@ export async function explain(error: unknown, terminal: Terminal): Promise<numbe
 }
 
 async function text(error: unknown, status: number): Promise<string> {
-  if (status === FAULT) return `rimeloop met a fault of its own: ${String(error)}. Please report it with the input; RIMELOOP_DEBUG=1 shows where.`;
+  if (status === FAULT) return `rimeloop met a fault of its own: ${String(error).replaceAll(/\s+/g, " ")}. Please report it with the input; RIMELOOP_DEBUG=1 shows where.`;
   if ((error as Error).name !== "NoSteadyState") return (error as Error).message;
   const { noSteadyState } = await import("../present/no-steady-state.js");
   return noSteadyState(error as Parameters<typeof noSteadyState>[0]);

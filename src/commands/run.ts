@@ -25,7 +25,8 @@ async function runOnce(input: Input, terminal: Terminal): Promise<number> {
   const { solveFile } = await import("./solve-file.js");
   const result = await solveFile(input.arguments[0] ?? "", await settingsOf(input));
   if (input.options.json === true) {
-    terminal.write(JSON.stringify(result, null, 2));
+    const { jsonText } = await import("../present/json.js");
+    terminal.write(jsonText(result));
     return ANSWERED;
   }
   const { report } = await import("../present/report.js");

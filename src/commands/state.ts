@@ -26,6 +26,7 @@ export const state: Command = {
     const { fluid } = await import("../fluids/registry.js");
     const gas = fluid(name);
     const { stateSheet, stateList } = await import("../present/states.js");
+    const { jsonText } = await import("../present/json.js");
     if (from !== undefined) {
       if (first !== undefined) {
         terminal.tell(`--from ${from}: a table beside the value "${first}"; expected one of the two`);
@@ -33,14 +34,14 @@ export const state: Command = {
       }
       const { readStates } = await import("./state-table.js");
       const rows = await readStates(from, gas);
-      terminal.write(format === "json" ? JSON.stringify(rows, null, 2) : stateList(rows, format as TableFormat));
+      terminal.write(format === "json" ? jsonText(rows) : stateList(rows, format as TableFormat));
       const without = rows.filter(({ state: at }) => at === undefined);
       for (const { line, status } of without) terminal.tell(`${from}:${line}: ${status}`);
       return without.length > 0 ? WRONG_INPUT : ANSWERED;
     }
     const { stateInput } = await import("./state-input.js");
     const at = gas.at(stateInput([first, second]));
-    if (format === "json") terminal.write(JSON.stringify(at, null, 2));
+    if (format === "json") terminal.write(jsonText(at));
     else if (format === "text") terminal.write(stateSheet(name, at));
     else terminal.write(stateList([{ line: 1, state: at, status: "ok" }], format as TableFormat));
     return ANSWERED;

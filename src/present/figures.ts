@@ -32,20 +32,21 @@ export function figureText(value: unknown, { dimension }: Figure): string | unde
 /** Columns before a block's figures: its name and kind. */
 const HEADING = 20;
 
-/** Every block with the figures that its kind reports, wrapped between figures. */
+/** Every block that has something to say, with the figures that its kind reports, wrapped between figures. */
 export function blockFigures(blocks: readonly BlockResult[]): string {
-  return blocks.map(oneBlock).join("\n");
+  return blocks
+    .map(oneBlock)
+    .filter((text) => text !== "")
+    .join("\n");
 }
 
 function oneBlock(block: BlockResult): string {
-  const said = new Set<string>();
-  const parts = (blockKind(block.kind)?.figures ?? []).flatMap((figure) => {
+  const figures = (blockKind(block.kind)?.figures ?? []).filter((figure) => !isIdle(block[figure.name], figure));
+  const parts = figures.flatMap((figure, i) => {
     const text = figureText(block[figure.name], figure);
-    if (text === undefined || isIdle(block[figure.name], figure) || said.has(text)) return [];
-    // One stage's ratio is the whole ratio: what was just said is not said again under another name.
-    said.add(text);
-    return [`${figure.label} ${text}`];
+    return text === undefined || isSaidBefore(figure, figures.slice(0, i), block) ? [] : [`${figure.label} ${text}`];
   });
+  if (parts.length === 0) return "";
   const heading = `${`${block.name} (${block.kind})`.padEnd(HEADING - 1)} `;
   return wrapItems(parts, { separator: ";", heading, indent: " ".repeat(HEADING) });
 }
@@ -53,4 +54,14 @@ function oneBlock(block: BlockResult): string {
 /** A leak or a drop that was left at zero says nothing. */
 function isIdle(value: unknown, { dimension }: Figure): boolean {
   return value === 0 && (dimension === "power" || dimension === "pressure difference");
+}
+
+/** Figures that are often another's under a second name: the one stage's is the whole machine's, the pinch is at an end. */
+const OFTEN_THE_SAME: ReadonlySet<Figure["dimension"]> = new Set(["none", "none list", "temperature list", "temperature difference"]);
+
+function isSaidBefore(figure: Figure, before: readonly Figure[], block: BlockResult): boolean {
+  if (!OFTEN_THE_SAME.has(figure.dimension)) return false;
+  const single = (name: string): unknown => (Array.isArray(block[name]) && block[name].length === 1 ? (block[name][0] as unknown) : block[name]);
+  const value = single(figure.name);
+  return typeof value === "number" && before.some(({ name }) => single(name) === value);
 }

@@ -1,12 +1,22 @@
+/**
+ * The number itself.
+ * @throws Error where it is none or endless: such a one is a fault of the program, and never printed as an answer
+ */
+export function finite(value: number): number {
+  if (Number.isFinite(value)) return value;
+  throw new Error(`a result is ${value}`);
+}
+
 /** A number with a fixed count of decimals; never "-0.00". */
 export function fixed(value: number, decimals: number): string {
+  finite(value);
   const text = value.toFixed(decimals);
   return /^-0(\.0*)?$/.test(text) ? text.slice(1) : text;
 }
 
 /** A number with a fixed count of significant digits, without exponent where it is of everyday size. */
 export function significant(value: number, digits: number): string {
-  if (value === 0) return "0";
+  if (finite(value) === 0) return "0";
   // The size of what is printed: 9.9996 to four digits is 10.00.
   const size = Math.floor(Math.log10(Math.abs(Number(value.toPrecision(digits)))));
   if (size < -4 || size > 8) return value.toExponential(digits - 1);
@@ -20,7 +30,7 @@ export function percent(value: number, decimals = 1): string {
 
 /** A number for a spreadsheet: all its digits, less the noise of the last ones. */
 export function fullDigits(value: number): string {
-  return String(Number(value.toPrecision(12)));
+  return String(Number(finite(value).toPrecision(12)));
 }
 
 /** Kelvin. */

@@ -61,15 +61,18 @@ function power({ power: bought, performance: { cop, secondLawEfficiency }, massF
   return ["Power", figures.join("; ")];
 }
 
+/** Smaller losses limit nothing. */
+const LEAST_SHARE = 0.005;
+
 /** The largest destroyers of what is bought, and the tightest place in each exchanger. */
 function limits({ exergy, blocks }: CycleResult): Line[] {
   const kinds = new Map(blocks.map(({ name, kind }) => [name, kind === name ? name : `${kind} ${name}`]));
-  const worst = exergy.toSorted((a, b) => b.destroyed - a.destroyed).slice(0, 3);
+  const worst = exergy.filter(({ share }) => share >= LEAST_SHARE).toSorted((a, b) => b.destroyed - a.destroyed).slice(0, 3);
   const losses = worst.map(({ block, share }) => `${kinds.get(block) ?? block} ${percent(share, 0)}`).join(", ");
   const pinches = blocks.flatMap(({ name, smallestDifference, smallestDifferenceAt }) =>
     typeof smallestDifference === "number" && typeof smallestDifferenceAt === "number" ? [`${name} ${kelvin(smallestDifference)} ${place(smallestDifferenceAt)}`] : [],
   );
-  const lines: Line[] = [["Most is lost in", `${losses} of all losses`]];
+  const lines: Line[] = worst.length === 0 ? [] : [["Most is lost in", `${losses} of all losses`]];
   if (pinches.length > 0) lines.push(["Pinch", pinches.join("; ")]);
   return lines;
 }

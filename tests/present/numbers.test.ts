@@ -19,6 +19,12 @@ describe("numbers", () => {
     [bars(101325), "1.013 bar"],
   ])("%s", (found, wanted) => expect(found).toBe(wanted));
 
+  it.each([NaN, Infinity, -Infinity])("are refused where one is %s", (value) => {
+    for (const write of [(each: number) => fixed(each, 2), (each: number) => significant(each, 4), fullDigits, percent, watts, bars]) {
+      expect(() => write(value)).toThrow(String(value));
+    }
+  });
+
   it("keep their value to the digits shown", () => {
     assert(
       property(double({ min: 1e-12, max: 1e12, noNaN: true }), integer({ min: 2, max: 8 }), (value, digits) => {

@@ -2,10 +2,12 @@ import { readdirSync, readFileSync } from "node:fs";
 import { describe, expect, it } from "vitest";
 import { assessed } from "../../src/cautions/registry.js";
 import type { CycleResult, Station } from "../../src/cycle/result.js";
+import { blockKind } from "../../src/blocks/registry.js";
 import { NoSteadyState } from "../../src/cycle/failure.js";
 import { solve } from "../../src/cycle/solve.js";
 import { readCycle } from "../../src/cyclefile/read.js";
 import { blockFigures } from "../../src/present/figures.js";
+import { lossTable } from "../../src/present/losses.js";
 import { noSteadyState } from "../../src/present/no-steady-state.js";
 import { report } from "../../src/present/report.js";
 import { stationTable } from "../../src/present/stations.js";
@@ -40,7 +42,7 @@ describe("the report", () => {
     const text = report(result, false);
     expectNarrow(text);
     expect(text).not.toMatch(/NaN|undefined|null|Infinity|\[object/);
-    for (const { name } of result.blocks) expect(text).toContain(`\n${name} (`);
+    for (const { name, kind } of result.blocks) if (blockKind(kind) !== undefined) expect(text).toContain(`\n${name} (`);
     for (const { after } of result.stations) expect(text).toContain(` ${after} `);
     for (const { title } of result.cautions) expect(text).toContain(title);
     const flat = text.replaceAll(/\s+/g, " ");
@@ -84,6 +86,23 @@ describe("the summary", () => {
   });
 });
 
+describe("the table of losses", () => {
+  it("is in one unit, the largest first, without those too small to matter", () => {
+    const text = lossTable([
+      { block: "V1", destroyed: 250, share: 0.0196 },
+      { block: "C1", destroyed: 12500, share: 0.9803 },
+      { block: "L1", destroyed: 0.1, share: 8e-6 },
+    ]);
+    const rows = text.split("\n").slice(3).map((line) => line.trim().split(/ +/));
+    expect(rows).toEqual([["C1", "12.50", "98.0", "#".repeat(39)], ["V1", "0.25", "2.0", "#"]]);
+    expect(text).toContain("kW");
+  });
+
+  it("says so where nothing is lost", () => {
+    expect(lossTable([])).toMatch(/nothing/);
+  });
+});
+
 describe("the state-point table", () => {
   it("spares columns where long names leave no room, and never a row or the temperature", () => {
     const long: Station[] = [];
@@ -117,15 +136,25 @@ describe("the state-point table", () => {
 });
 
 describe("a block's figures", () => {
-  it("leave out what is zero by default, what was just said, and the profile", () => {
+  it("leave out what is zero by default, what one stage repeats of the whole, and the profile", () => {
     const text = blockFigures(bench.blocks);
-    expect(text).not.toMatch(/heat leak|ratio of each stage|profile/);
+    expect(text).not.toMatch(/heat leak|ratio of each stage|discharge of each stage|profile/);
     expect(text).toContain("pressure ratio 6.957");
+  });
+
+  it("keep what is equal by nature or by chance", () => {
+    const text = blockFigures([
+      { name: "C2", kind: "compressor", power: 800, drivePower: 0, recoveredPower: 800, stageDischargeTemperatures: [310, 320], dischargeTemperature: 320 },
+      { name: "L1", kind: "load", heat: 5, inletTemperature: 77.36, outletTemperature: 77.36 },
+    ]).replaceAll(/\s+/g, " ");
+    expect(text.match(/800\.0 W/g)).toHaveLength(2);
+    expect(text.match(/77\.36 K/g)).toHaveLength(2);
+    expect(text).toContain("310.00 K, 320.00 K");
   });
 
   it("are printed for every kind, from its record, with a name of any length", () => {
     for (const block of bench.blocks) expectNarrow(blockFigures([{ ...block, name: "a name that is longer than usual" }]));
-    expect(blockFigures([{ name: "Z", kind: "unheard-of" }])).toBe("Z (unheard-of)");
+    expect(blockFigures([{ name: "Z", kind: "unheard-of" }])).toBe("");
   });
 });
 
