@@ -1,16 +1,18 @@
-import type { EvalFunction, MathNode, MathType, OperatorNode, SymbolNode, Unit as MathUnit } from "mathjs";
+import type { EvalFunction, MathNode, OperatorNode, SymbolNode } from "mathjs/number";
 import { shortened, type Complaint } from "./document.js";
-import { math, MINUTE, SI_UNIT, unitValues } from "./mathjs.js";
+import { math } from "./mathjs.js";
+import { measure, scaleUnit, SumOfPoints, UnitsError, type Measured } from "./measure.js";
 import { nearest, suggested } from "./nearest.js";
 import type { Quantity } from "./quantity.js";
-import { scaleOf, scaleUnit, SumOfPoints } from "./scale.js";
 import { units, type Unit, type UnitKind } from "./units.js";
 import { unknownName, type Scope } from "./values.js";
-import { FUNCTIONS } from "./vocabulary.js";
+import { alike, DIMENSIONS, expressionUnits, FUNCTIONS } from "./vocabulary.js";
 
 const OPERATORS = new Set(["+", "-", "*", "/", "^"]);
-/** The surroundings' pressure within an expression; no user can write the name. */
-const GAUGE_ZERO = "gauge zero";
+/** The minute within an expression, where min is the function; like the next, a name that no user can write. */
+const MINUTE = "the minute";
+/** The surroundings' pressure within an expression. */
+const GAUGE_ZERO = "the gauge zero";
 /** Expressions kept compiled; a sweep over an expression would otherwise fill the memory. */
 const MOST_COMPILED = 500;
 
@@ -31,9 +33,16 @@ class Refused extends Error {
 
 const compiled = new Map<string, Compiled | Complaint>();
 
+/** What units and constants are in SI. */
+const constants: ReadonlyMap<string, number> = new Map([
+  ["pi", Math.PI],
+  ...Array.from(expressionUnits, ([name, { factor }]): [string, number] => [name === "min" ? MINUTE : name, factor]),
+]);
+
 /**
- * Evaluates an expression of numbers, units and names by mathjs, without anything but arithmetic: an expression cannot define,
- * assign, index, or reach an object. Temperatures and gauge pressures are taken from absolute zero before anything is done to them.
+ * Evaluates an expression of numbers, units and names: mathjs reads it and does the arithmetic, of SI values, and what is measured is
+ * followed beside it. An expression cannot define, assign, index, or reach an object. Temperatures and gauge pressures are counted
+ * from absolute zero before anything is done to them.
  */
 export function evaluateExpression(text: string, scope: Scope): Quantity | Complaint | null {
   let expression = compiled.get(text);
@@ -47,50 +56,37 @@ export function evaluateExpression(text: string, scope: Scope): Quantity | Compl
 
 function evaluate(text: string, { tree, code, names, gauge }: Compiled, scope: Scope): Quantity | Complaint | null {
   const quantities = new Map<string, Quantity>();
-  const values = new Map<string, MathType>(unitValues);
+  const values = new Map(constants);
   for (const name of names) {
     const quantity = scope.get(name);
     if (quantity === null) return null;
     if (quantity === undefined) return unknown(name, scope);
     quantities.set(name, quantity);
-    values.set(name, quantity.kind === "fraction" ? quantity.value : math.unit(quantity.value, SI_UNIT[quantity.kind]));
+    values.set(name, quantity.value);
   }
   if (gauge) {
     const zero = scope.surroundingsPressure();
     if (Number.isNaN(zero)) return null;
     values.set(GAUGE_ZERO, zero);
   }
-  let result: unknown;
-  let scale: Quantity["scale"];
+  const complaint = (found: string, expected: string): Complaint => ({ code: "expression-units", found: `"${shortened(text)}", ${found}`, expected });
   try {
-    scale = scaleOf(tree, (name) => quantities.get(name));
-    result = code.evaluate(values);
+    const measured = measure(tree, quantities, (node) => Number(node.compile().evaluate(values)));
+    const value: unknown = code.evaluate(values);
+    if (!Number.isFinite(value)) return complaint("which has no finite value", "a finite number");
+    return quantityOf(value as number, measured) ?? complaint("which is none of the quantities that a cycle file uses", "a number, or a quantity such as a pressure, a temperature or a flow");
   } catch (error) {
-    if (error instanceof SumOfPoints) {
-      return { code: "expression-units", found: `"${shortened(text)}", two places on a scale added`, expected: "a difference to be added, in K or in an absolute unit of pressure, as in 22 degC + 5 K" };
-    }
-    return { code: "expression-units", found: `"${shortened(text)}", in which the units do not go together`, expected: "quantities of one kind to be added, and plain numbers in functions and exponents" };
+    if (error instanceof SumOfPoints) return complaint("two places on a scale added", "a difference to be added, in K or in an absolute unit of pressure, as in 22 degC + 5 K");
+    if (error instanceof UnitsError) return complaint("in which the units do not go together", "quantities of one kind to be added, and plain numbers in functions and exponents");
+    return { code: "expression-syntax", found: `"${shortened(text)}", which cannot be evaluated`, expected: "each function of as many values as it takes" };
   }
-  return quantityFrom(result, scale) ?? { code: "expression-units", found: `"${shortened(text)}", which is no finite value of a kind that a cycle file uses`, expected: "a number, or a quantity such as a pressure, a temperature or a flow" };
 }
 
-function quantityFrom(result: unknown, scale: Quantity["scale"]): Quantity | undefined {
-  if (typeof result === "number") return Number.isFinite(result) ? { value: result, kind: "fraction" } : undefined;
-  const quantity = result as MathUnit;
-  for (const [kind, unit] of Object.entries(SI_UNIT) as [Exclude<UnitKind, "fraction">, string][]) {
-    if (!math.isUnit(quantity) || !kindUnit(kind, unit).equalBase(quantity)) continue;
-    const value = quantity.toNumber(unit);
-    if (!Number.isFinite(value)) return undefined;
-    return scale === undefined || (kind !== "temperature" && kind !== "pressure") ? { value, kind } : { value, kind, scale };
+function quantityOf(value: number, { dimensions, scale }: Measured): Quantity | undefined {
+  for (const [kind, own] of Object.entries(DIMENSIONS) as [UnitKind, Measured["dimensions"]][]) {
+    if (alike(dimensions, own)) return scale === undefined || kind === "fraction" ? { value, kind } : { value, kind, scale };
   }
   return undefined;
-}
-
-const kindUnits = new Map<UnitKind, MathUnit>();
-function kindUnit(kind: UnitKind, unit: string): MathUnit {
-  const known = kindUnits.get(kind) ?? math.unit(1, unit);
-  kindUnits.set(kind, known);
-  return known;
 }
 
 function compile(text: string): Compiled | Complaint {
@@ -101,9 +97,9 @@ function compile(text: string): Compiled | Complaint {
     const check = (node: MathNode, path: string | null): MathNode => {
       const scale = scaleUnit(node);
       if (scale === undefined) return checked(node, path, names);
-      gauge ||= scale.unit.gauge === true;
+      gauge ||= scale.gauge === true;
       // What has been replaced is not looked into any more.
-      return fromZero((node as OperatorNode).args[0].transform(check), scale.unit);
+      return fromZero((node as OperatorNode).args[0].transform(check), scale);
     };
     const arithmetic = tree.transform(check);
     return { tree, code: arithmetic.compile(), names: [...names], gauge };
@@ -122,13 +118,12 @@ function parse(text: string): MathNode {
   }
 }
 
-/** A number of a unit with a zero of its own, counted from absolute zero: 22 degC as (22 * 1 + 273.15) K. */
-function fromZero(number: MathNode, { kind, factor, offset = 0, gauge }: Unit): MathNode {
+/** A number of a unit with a zero of its own, counted from absolute zero: 22 degC as (22 * 1 + 273.15). */
+function fromZero(number: MathNode, { factor, offset = 0, gauge }: Unit): MathNode {
   const { ConstantNode, OperatorNode, ParenthesisNode, SymbolNode } = math;
   const zero = gauge === true ? new SymbolNode(GAUGE_ZERO) : new ConstantNode(offset);
   const scaled = new OperatorNode("*", "multiply", [number, new ConstantNode(factor)]);
-  const sum = new ParenthesisNode(new OperatorNode("+", "add", [scaled, zero]));
-  return new OperatorNode("*", "multiply", [sum, new SymbolNode(kind === "pressure" ? "Pa" : "K")]);
+  return new ParenthesisNode(new OperatorNode("+", "add", [scaled, zero]));
 }
 
 /** A node that is arithmetic, with the minute told from the function min; anything else is refused. */
@@ -143,14 +138,12 @@ function checked(node: MathNode, path: string | null, names: Set<string>): MathN
     const name = math.isSymbolNode(called) ? called.name : String(called);
     return FUNCTIONS.includes(name) ? node : refuse(`a call of "${shortened(name)}"`, name);
   }
-  if (math.isOperatorNode(node)) {
-    return OPERATORS.has(node.op) ? node : refuse(`the operator "${node.op}"`);
-  }
+  if (math.isOperatorNode(node)) return OPERATORS.has(node.op) ? node : refuse(`the operator "${node.op}"`);
   if (!math.isSymbolNode(node)) return refuse(`"${shortened(String(node))}"`);
   if (path === "fn") return node;
   const { name } = node as SymbolNode;
   if (name === "min") return new math.SymbolNode(MINUTE);
-  if (unitValues.has(name)) return node;
+  if (constants.has(name)) return node;
   if (Object.hasOwn(units, name)) return refuse(`"${name}" without a number before it`, name);
   if (FUNCTIONS.includes(name)) return refuse(`"${name}" without what it is to be taken of`, name);
   names.add(name);
@@ -160,5 +153,5 @@ function checked(node: MathNode, path: string | null, names: Set<string>): MathN
 function unknown(name: string, scope: Scope): Complaint {
   const complaint = unknownName(name, scope.names());
   if (complaint.suggestion !== undefined) return complaint;
-  return { ...complaint, ...suggested(nearest(name, [...unitValues.keys(), ...Object.keys(units).filter((unit) => /^\w+$/.test(unit))])) };
+  return { ...complaint, ...suggested(nearest(name, [...expressionUnits.keys(), ...Object.keys(units).filter((unit) => /^\w+$/.test(unit))])) };
 }
