@@ -25,6 +25,7 @@ function register(program: Program, command: Command): void {
   }
   const examples = command.examples.map(([line, answer]) => `  ${line}\n      ${answer}`).join("\n");
   entry.addHelpText("after", `\nExamples:\n${examples}`);
+  entry.showHelpAfterError(`rimeloop ${command.name} --help says what it takes.`);
   entry.action(async (...given: unknown[]) => {
     const words = given.slice(0, command.arguments.length) as (string | undefined)[];
     const options = given[command.arguments.length] as Record<string, string | boolean | string[]>;
@@ -45,12 +46,14 @@ const { version } = JSON.parse(readFileSync(new URL("../package.json", import.me
 const program = new Program("rimeloop")
   .description("Steady state of small reverse-Brayton air coolers and liquefiers with real-gas properties")
   .version(version, "--version", "print the version")
-  .helpOption("--help", "print help")
+  .helpOption("-h, --help", "print this help")
+  .helpCommand("help [COMMAND]", "print the help of a command")
+  .addHelpText("after", `\nTo begin with:\n${commands.map(({ examples: [[line]] }) => `  ${line}`).join("\n")}\n\nrimeloop COMMAND --help says more of each.`)
   .configureHelp({ helpWidth: 100 })
   .exitOverride()
+  .showHelpAfterError("rimeloop --help lists the commands.")
   .showSuggestionAfterError();
 for (const command of commands) register(program, command);
-for (const entry of program.commands) entry.exitOverride();
 
 try {
   await program.parseAsync();

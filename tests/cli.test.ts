@@ -55,6 +55,21 @@ describe("the program", () => {
     expect(program.run("run", "x.yaml", "--jsno").told).toContain("--json");
   });
 
+  it("lists every command in its help, with a line to copy, and names the help to whoever mistypes", () => {
+    for (const flag of ["--help", "-h"]) {
+      const { status, out, told } = program.run(flag);
+      expect({ status, told }).toEqual({ status: 0, told: "" });
+      for (const { name, examples } of commands) {
+        expect(out).toMatch(new RegExp(`^  ${name} `, "m"));
+        expect(out).toContain(examples[0][0]);
+      }
+      for (const line of out.split("\n")) expect(line.length, line).toBeLessThanOrEqual(100);
+    }
+    expect(program.run("nothing").told).toContain("rimeloop --help");
+    expect(program.run("points").told).toContain("rimeloop points --help");
+    expect(program.run()).toMatchObject({ status: 2, out: "" });
+  });
+
   it.each(commands.map(({ name }) => name))("prints the help of %s within a terminal's width", (name) => {
     const { status, out } = program.run(name, "--help");
     expect(status).toBe(0);
