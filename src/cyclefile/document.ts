@@ -99,7 +99,7 @@ export class Document {
 
   private problemAt(offset: number, complaint: Complaint): LocatedProblem {
     const { line, col } = this.lines.linePos(offset);
-    return { ...complaint, line: Math.max(1, line), column: Math.max(1, col), place: `${this.file}:${Math.max(1, line)}:${Math.max(1, col)}` };
+    return { ...complaint, found: oneLine(complaint.found), expected: oneLine(complaint.expected), line: Math.max(1, line), column: Math.max(1, col), place: `${this.file}:${Math.max(1, line)}:${Math.max(1, col)}` };
   }
 
   private tooDeep(): InputError {
@@ -129,9 +129,14 @@ export function kindOf(node: unknown): string {
   return text === "" ? "nothing" : `"${shortened(text)}"`;
 }
 
+/** Text without what would break a line or speak to a terminal. */
+export function oneLine(text: string): string {
+  return text.replaceAll(/[\s\p{C}]+/gu, " ");
+}
+
 /** Text to show in a message: one line, not too long. */
 export function shortened(text: string): string {
-  const line = text.replaceAll(/[\s\p{Cc}]+/gu, " ");
+  const line = oneLine(text);
   return line.length <= 60 ? line : `${line.slice(0, 57)}…`;
 }
 

@@ -8,7 +8,7 @@ import { readValues, type RawEntry } from "./raw.js";
 const KINDS = blockKinds.map(({ kind }) => kind);
 /** Beginnings of addresses that are no block's. */
 const TAKEN = new Set(["let", "flow", "surroundings"]);
-const BLOCK = "one block, as in  load: { name: L1, heat: 20 W }";
+const BLOCK = "one block, as in load: { name: L1, heat: 20 W }";
 
 /** One entry of a list of blocks; undefined, with its problem told, where it cannot be made out. */
 export function readEntry(document: Document, item: unknown, problems: LocatedProblem[]): RawEntry | undefined {

@@ -1,4 +1,4 @@
-import type { Complaint, Document } from "./document.js";
+import { oneLine, type Complaint, type Document } from "./document.js";
 import type { LocatedProblem } from "./errors.js";
 import type { RawEntry, RawValue } from "./raw.js";
 
@@ -30,5 +30,5 @@ export function written(given: Given): string | number {
 export function located(document: Document, at: Given | RawEntry, complaint: Complaint): LocatedProblem {
   if (!("address" in at)) return document.problem(at.node, complaint);
   const { part: _part, ...rest } = complaint;
-  return { ...rest, place: `--set ${at.address}=${at.value}`, line: 0, column: 0 };
+  return { ...rest, found: oneLine(rest.found), place: `--set ${at.address}=${at.value}`, line: 0, column: 0 };
 }

@@ -1,6 +1,6 @@
 import { isMap, isSeq, type Node, type YAMLMap } from "yaml";
 import { fluidNames } from "../fluids/registry.js";
-import { kindOf, pairsOf, textOf, type Document } from "./document.js";
+import { kindOf, oneLine, pairsOf, textOf, type Document } from "./document.js";
 import { readEntry } from "./entry.js";
 import type { LocatedProblem } from "./errors.js";
 import { nearest, suggested } from "./nearest.js";
@@ -96,8 +96,9 @@ export function readRaw(document: Document, problems: LocatedProblem[]): RawFile
   if (circuit !== undefined && circuit.text !== "open" && circuit.text !== "closed") {
     complain(circuit.node, "circuit", `the circuit "${circuit.text}"`, EXPECTED.circuit, nearest(circuit.text, ["closed", "open"]));
   }
+  const title = text("title")?.text;
   return {
-    title: text("title")?.text,
+    title: title === undefined ? undefined : oneLine(title),
     fluid: known ? fluid.text : undefined,
     circuit: circuit?.text === "open" ? "open" : "closed",
     flow: text("flow"),

@@ -1,4 +1,5 @@
 import { describe, expect, it } from "vitest";
+import { readCycle } from "../../src/cyclefile/read.js";
 import { bench, changed, codesOf, problemsOf } from "./cases.js";
 
 type Changes = readonly (readonly [from: string, to: string])[];
@@ -99,6 +100,14 @@ describe("one fault in a file", () => {
         }
       }
     }
+  });
+
+  it("is told in one line whatever stands in the text, and a title is one", () => {
+    const escapes = changed(bench, ["title: Bench", "title: \"a\\nb\\e[31mc\"\n\"ti\\ntle\": Bench"], ["heat: 20 W", "\"he\\e[1mat\": 20 W"]);
+    const problems = problemsOf(escapes);
+    expect(problems.map(({ code }) => code)).toEqual(["unknown-key", "unknown-key"]);
+    for (const { found } of problems) expect(found).toMatch(/^[\x20-\x7E]+$/);
+    expect(readCycle(changed(bench, ["title: Bench cooler", "title: \"a\\nb\\e[31mc\" #"])).title).toBe("a b [31mc");
   });
 
   it.each([

@@ -51,9 +51,9 @@ const mutated = fc
     return result;
   });
 
-describe("whatever the input", () => {
+describe("whatever the input", { timeout: 60_000 }, () => {
   it("mutated examples are read or refused", () => {
-    fc.assert(fc.property(mutated, (text) => expectAnswer(text)), { seed: 7, numRuns: 1500 });
+    fc.assert(fc.property(mutated, (text) => expectAnswer(text)), { seed: 7, numRuns: 1000 });
   });
 
   it("lines in another order are read or refused", () => {
@@ -72,7 +72,7 @@ describe("whatever the input", () => {
   it("random values are read or refused", () => {
     const value = fc.oneof(fc.string({ maxLength: 12 }), fc.array(fc.constantFrom(...PIECES, ...Object.keys(units), "2", "3.5", " "), { maxLength: 8 }).map((pieces) => pieces.join("")), fc.double());
     const address = fc.oneof(fc.constantFrom("T1.efficiency", "flow", "let.p_high", "HX1.approach", "A1.outlet-temperature", "surroundings.pressure", "C1.stages", "HX1.warm.pressure-drop"), fc.string({ maxLength: 8 }));
-    fc.assert(fc.property(fc.array(fc.record({ address, value }), { minLength: 1, maxLength: 3 }), (set) => expectAnswer(bench, set)), { seed: 12, numRuns: 1500 });
+    fc.assert(fc.property(fc.array(fc.record({ address, value }), { minLength: 1, maxLength: 3 }), (set) => expectAnswer(bench, set)), { seed: 12, numRuns: 1000 });
   });
 
   it("every number written is read as it is", () => {
