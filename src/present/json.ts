@@ -5,5 +5,5 @@ import { finite } from "./numbers.js";
  * @throws Error where a number is not finite, which JSON would silently write as null
  */
 export function jsonText(result: unknown): string {
-  return JSON.stringify(result, (_key, value: unknown) => (typeof value === "number" ? finite(value) : value), 2);
+  return JSON.stringify(result, (key, value: unknown) => (typeof value === "number" ? finite(value, key) : value), 2);
 }

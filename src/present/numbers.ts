@@ -2,9 +2,9 @@
  * The number itself.
  * @throws Error where it is none or endless: such a one is a fault of the program, and never printed as an answer
  */
-export function finite(value: number): number {
+export function finite(value: number, name = "a result"): number {
   if (Number.isFinite(value)) return value;
-  throw new Error(`a result is ${value}`);
+  throw new Error(`${name} is ${value}`);
 }
 
 /** A number with a fixed count of decimals; never "-0.00". */

@@ -27,13 +27,15 @@ export interface ItemLayout {
   readonly width?: number;
 }
 
-/** Items in lines of at most a width, broken between items only. */
+/** Items in lines of at most a width, broken between items; one that is wider than a line by itself also behind its commas. */
 export function wrapItems(items: readonly string[], { separator, heading = "", indent = "", width = WIDTH }: ItemLayout): string {
   const lines: string[] = [];
   let line = heading;
   let isEmpty = true;
-  items.forEach((item, i) => {
-    const piece = i < items.length - 1 ? item + separator : item;
+  const pieces = items
+    .map((item, i) => (i < items.length - 1 ? item + separator : item))
+    .flatMap((item) => (indent.length + item.length > width ? item.split(/(?<=,) /) : [item]));
+  for (const piece of pieces) {
     if (!isEmpty && line.length + 1 + piece.length > width) {
       lines.push(line);
       line = indent + piece;
@@ -41,6 +43,6 @@ export function wrapItems(items: readonly string[], { separator, heading = "", i
       line += isEmpty ? piece : ` ${piece}`;
     }
     isEmpty = false;
-  });
+  }
   return [...lines, line.trimEnd()].join("\n");
 }

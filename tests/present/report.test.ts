@@ -152,6 +152,12 @@ describe("a block's figures", () => {
     expect(text).toContain("310.00 K, 320.00 K");
   });
 
+  it("are broken within a list that is longer than a line, never between a number and its unit", () => {
+    const text = blockFigures([{ name: "C1", kind: "compressor", dischargeTemperature: 400, stageDischargeTemperatures: Array.from({ length: 20 }, (_, i) => 320.25 + i) }]);
+    expectNarrow(text);
+    expect(text.match(/\d K[,;]?/g)).toHaveLength(21);
+  });
+
   it("are printed for every kind, from its record, with a name of any length", () => {
     for (const block of bench.blocks) expectNarrow(blockFigures([{ ...block, name: "a name that is longer than usual" }]));
     expect(blockFigures([{ name: "Z", kind: "unheard-of" }])).toBe("");
