@@ -1,3 +1,4 @@
+import type { SteadyState } from "../cycle/result.js";
 import type { Override } from "../cyclefile/define.js";
 import { InputError } from "../cyclefile/errors.js";
 import type { CycleFile } from "../cyclefile/open.js";
@@ -10,6 +11,8 @@ import type { Variable } from "./variation.js";
 const SCANNED = 60;
 /** Share of the span by which a bound that is itself illegal is kept away from. */
 const FROM_BOUND = 1e-3;
+/** Share of the span at which the machine is looked at on either side of a turn. */
+const ASIDE = 1e-3;
 /** A key without bounds is looked at from a tenth to ten times what the file gives, a temperature 50 K up and down. */
 const AROUND = 10;
 const AROUND_TEMPERATURE = 50;
@@ -21,15 +24,21 @@ export interface BreakEven {
   /** The range looked at. */
   readonly range: readonly [number, number];
   /** Every place at which the condition turns, ascending. */
-  readonly turns: readonly Turn[];
+  readonly turns: readonly BreakEvenTurn[];
   /** Places at which steady states end without the condition turning there. */
   readonly edges: readonly Edge[];
-  /** What the quantity is (SI) at both ends of the range, or why it is nothing. */
-  readonly ends: readonly [End, End];
+  /** The machine at both ends of the range. */
+  readonly ends: readonly [Looked, Looked];
   /** The same at the file's own number; null where the file leaves it out. */
-  readonly given: End | null;
+  readonly given: Looked | null;
   /** Whether any place looked at has a steady state with that quantity. */
   readonly solved: boolean;
+}
+
+/** A place where the condition turns, with the machine a little below and above it. */
+export interface BreakEvenTurn extends Turn {
+  readonly below: Looked;
+  readonly above: Looked;
 }
 
 /** Where and how closely to look. */
@@ -41,12 +50,16 @@ export interface BreakEvenOptions {
   readonly scanned?: number;
 }
 
-/** The quantity at one place. */
-export interface End {
+/** The machine at one place. */
+export interface Looked {
   readonly x: number;
-  /** SI; null with a reason */
+  /** The condition's quantity, SI; null with a reason */
   readonly value: number | null;
   readonly met: boolean;
+  /** Temperature of the coldest station, K; null without a steady state */
+  readonly coldEnd: number | null;
+  /** Whether liquid forms somewhere. */
+  readonly wet: boolean;
   readonly reason: string | null;
 }
 
@@ -63,23 +76,33 @@ export function breakEven(
 ): BreakEven {
   if (variable.whole) throw refusal(variable, "a number that moves in whole steps", "a number that can take any value; sweep this one");
   const [from, to] = range;
-  const solveAt = (x: number) => solvePoint(file, [...overrides, variable.override(x)]);
-  const missing = `the machine has no ${condition.quantity.name}`;
+  const { needs, name } = condition.quantity;
+  const solveAt = (x: number) => solvePoint(file, [...overrides, variable.override(x)], needs === undefined ? {} : { needs });
+  const missing = (result: SteadyState): string => [`no ${name}`, condition.quantity.missing?.(result) ?? "the machine has none"].join(": ");
   const follow: Followed = (x) => {
     const point = solveAt(x);
-    return point.status === "solved" ? (condition.excess(point.result) ?? { reason: missing }) : { reason: `${point.status}. ${point.reason}` };
+    return point.status === "solved" ? (condition.excess(point.result) ?? { reason: missing(point.result) }) : { reason: `${point.status}. ${point.reason}` };
   };
   const places = Array.from({ length: scanned + 1 }, (_, i) => (i === scanned ? to : from + ((to - from) * i) / scanned));
   const { turns, edges, scan } = crossings(follow, places);
   const solved = scan.some(({ value }) => value !== null);
-  const given = variable.given === undefined ? null : end(variable.given);
-  return { variable, condition, range, turns, edges, ends: [end(from), end(to)], given, solved };
+  const given = variable.given === undefined ? null : look(variable.given);
+  return { variable, condition, range, turns: turns.map(withSides), edges, ends: [look(from), look(to)], given, solved };
 
-  function end(x: number): End {
+  /** Looks on either side, though no further than half the way to the next place at which anything changes. */
+  function withSides(turn: Turn): BreakEvenTurn {
+    const others = [from, to, ...turns.map(({ x }) => x), ...edges.map(({ x }) => x)].map((x) => Math.abs(x - turn.x));
+    const aside = Math.min(ASIDE * (to - from), ...others.filter((distance) => distance > 0).map((distance) => distance / 2));
+    return { ...turn, below: look(turn.x - aside), above: look(turn.x + aside) };
+  }
+
+  function look(x: number): Looked {
     const point = solveAt(x);
-    if (point.status !== "solved") return { x, value: null, met: false, reason: `${point.status}. ${point.reason}` };
-    const value = condition.quantity.get(point.result);
-    return { x, value, met: (condition.excess(point.result) ?? 0) < 0, reason: value === null ? missing : null };
+    if (point.status !== "solved") return { x, value: null, met: false, coldEnd: null, wet: false, reason: `${point.status}. ${point.reason}` };
+    const { result } = point;
+    const value = condition.quantity.get(result);
+    const met = (condition.excess(result) ?? 0) < 0;
+    return { x, value, met, coldEnd: result.coldEnd.temperature, wet: result.liquefaction.reached, reason: value === null ? missing(result) : null };
   }
 }
 

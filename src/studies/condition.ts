@@ -17,7 +17,9 @@ export interface Condition {
   excess(result: SteadyState): number | null;
 }
 
-const COMPARISON = /^(\S+?)\s*(>=|<=|>|<)\s*(.+)$/;
+const COMPARISON = /^(.+?)\s*(>=|<=|>|<)\s*(.+)$/;
+/** Share of the limit within which a result equals it: the round-off of adding up. */
+const ROUND_OFF = 1e-12;
 
 /**
  * The condition that a text means: "liquefies", or a result with a value: "capacity > 20 W".
@@ -41,13 +43,17 @@ export function parseCondition(text: string, definition: CycleDefinition): Condi
   const wrong = complaint(value, quantity.dimension);
   if (wrong !== null) return refuse(wrong.found, wrong.expected);
   const sign = operator.startsWith(">") ? 1 : -1;
+  // A number below zero, though no further than a number can be, lets ">=" hold where the result equals the limit.
+  const equal = operator.endsWith("=") ? -Number.MIN_VALUE : 0;
   return {
     text: text.trim(),
     quantity,
     limit: value.value,
     excess: (result) => {
       const found = quantity.get(result);
-      return found === null ? null : sign * (value.value - found);
+      if (found === null) return null;
+      const excess = sign * (value.value - found);
+      return Math.abs(excess) <= ROUND_OFF * Math.abs(value.value) ? equal : excess;
     },
   };
 }

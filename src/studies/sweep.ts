@@ -2,7 +2,7 @@ import type { Override } from "../cyclefile/define.js";
 import { InputError } from "../cyclefile/errors.js";
 import type { CycleFile } from "../cyclefile/open.js";
 import { solvePoint, type Point } from "./point.js";
-import type { ResultQuantity } from "./quantities.js";
+import { needsOf, type ResultQuantity } from "./quantities.js";
 import type { Variable } from "./variation.js";
 
 /** Points beyond which a sweep is refused: some minutes of computing. */
@@ -43,9 +43,10 @@ export function sweep(file: CycleFile, swept: readonly Swept[], shown: readonly 
 }
 
 function* rows(file: CycleFile, swept: readonly Swept[], shown: readonly ResultQuantity[], overrides: readonly Override[]): Generator<SweepRow> {
+  const needs = needsOf(shown);
   let before: Point | undefined;
   for (const values of combinations(swept.map((each) => each.values))) {
-    const point = solvePoint(file, [...overrides, ...values.map((value, i) => swept[i].variable.override(value))], before);
+    const point = solvePoint(file, [...overrides, ...values.map((value, i) => swept[i].variable.override(value))], { needs, neighbour: before });
     before = point;
     yield point.status === "solved"
       ? { values, status: point.status, reason: null, wet: point.result.liquefaction.reached, results: shown.map(({ get }) => get(point.result)) }

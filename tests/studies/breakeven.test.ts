@@ -52,6 +52,45 @@ describe("break-even", () => {
     expect(bars).toBeCloseTo(1.01325 + gauge * 0.0689475729, 5);
   });
 
+  it("shows the machine on either side of where it turns", () => {
+    const [{ x, below, above }] = ask("T1.efficiency=10%..100%", "liquefies", WITHOUT_LOAD).turns;
+    expect([below.met, below.wet, above.met, above.wet]).toEqual([false, false, true, true]);
+    expect(below.x).toBeLessThan(x);
+    expect(above.x).toBeGreaterThan(x);
+    const alone = solve(file.define([...WITHOUT_LOAD, { address: "T1.efficiency", value: above.x / 100 }]), { threshold: false });
+    expect(above.value).toBeCloseTo(alone.liquefaction.margin as number, 6);
+    expect(above.coldEnd).toBeCloseTo(alone.coldEnd.temperature, 9);
+  });
+
+  it("looks on either side no further than the next place at which anything changes", () => {
+    // 384.5 W is what the machine lifts at most; the load's own turn lies 0.1 W below.
+    const { turns, edges } = ask("L1.heat=1 W..400 W", "capacity < 384.4 W");
+    const [edge] = edges;
+    expect(turns[0].above.x).toBeLessThan(edge.x);
+    expect(turns[0].above).toMatchObject({ met: false, reason: null });
+  });
+
+  it("says why there is nothing beyond an edge", () => {
+    const edge = ask("L1.heat=1 W..400 W", "capacity > 10 W").turns[1];
+    expect(edge.below).toMatchObject({ met: true, reason: null });
+    expect(edge.above.coldEnd).toBeNull();
+    expect(edge.above.reason).toContain("L1");
+  });
+
+  it("is the same by way of the efficiency required", () => {
+    // The file's expander has 50 %: where more is required it stays dry.
+    const [byRequired] = ask("HX1.effectiveness", "liquefaction.required <= 50 %").turns;
+    const [byMargin] = ask("HX1.effectiveness", "liquefies").turns;
+    expect(byRequired.x).toBeCloseTo(byMargin.x, 6);
+  });
+
+  it("counts a result equal to the limit for >= and not for >", () => {
+    const [atLeast, more] = [">=", ">"].map((operator) => ask("T1.efficiency=30%..80%", `capacity ${operator} 20 W`));
+    expect([atLeast, more].map(({ turns }) => turns.length)).toEqual([0, 0]);
+    expect(atLeast.ends.map(({ met }) => met)).toEqual([true, true]);
+    expect(more.ends.map(({ met }) => met)).toEqual([false, false]);
+  });
+
   it("says that a condition never turns, with the values at both ends", () => {
     const { turns, ends } = ask("T1.efficiency=30%..80%", "net-power > 1 W");
     expect(turns).toEqual([]);
@@ -86,6 +125,13 @@ describe("conditions", () => {
     ["capacity > 19 W", true],
     ["capacity > 21 W", false],
     ["capacity<=0.021 kW", true],
+    ["capacity >= 20 W", true],
+    ["capacity <= 20 W", true],
+    ["capacity > 20 W", false],
+    ["capacity < 20 W", false],
+    ["station-4.temperature < 90 K", true],
+    ["station 1.pressure > 7.9 bar", true],
+    ["station 1.pressure >8.1bar", false],
     ["cold-end.temperature < -100 degC", true],
     ["C1.discharge-temperature > 200 degC", true],
     ["C1.dischargeTemperature < 200 degC", false],
@@ -95,7 +141,7 @@ describe("conditions", () => {
     expect((parseCondition(condition, definition).excess(result) as number) < 0).toBe(met);
   });
 
-  it.each(["capacity > 20", "capacity > 20 bar", "capacity", "capasity > 20 W", "capacity > 20 Wat", "HX1.smallest-difference > 2 degC", "C9.power > 2 W", "mass-flow > 2 L/min"])(
+  it.each(["capacity > 20", "capacity > 20 bar", "capacity", "capasity > 20 W", "capacity > 20 Wat", "HX1.smallest-difference > 2 degC", "C9.power > 2 W", "station-99.pressure > 2 bar", "station-4.colour > 2 K", "capacity = 20 W", "mass-flow > 2 L/min"])(
     "refuses %s",
     (condition) => {
       expect(() => parseCondition(condition, definition)).toThrow(InputError);

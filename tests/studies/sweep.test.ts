@@ -5,12 +5,13 @@ import { InputError } from "../../src/cyclefile/errors.js";
 import { evaluateExpression } from "../../src/cyclefile/expression.js";
 import { openCycleFile } from "../../src/cyclefile/open.js";
 import { solve } from "../../src/cycle/solve.js";
-import { resultQuantities, resultQuantity, blockQuantities } from "../../src/studies/quantities.js";
+import { blockQuantities, resultQuantities, resultQuantity } from "../../src/studies/quantities.js";
+import { stationQuantities } from "../../src/studies/station-quantities.js";
 import { MOST_POINTS, sweep, type SweepRow } from "../../src/studies/sweep.js";
 import { parseVariation } from "../../src/studies/variation.js";
 
-const text = readFileSync(fileURLToPath(new URL("../../cycles/bench-cooler.yaml", import.meta.url)), "utf8");
-const file = openCycleFile(text, "bench-cooler.yaml", evaluateExpression);
+const example = (name: string) => openCycleFile(readFileSync(fileURLToPath(new URL(`../../cycles/${name}`, import.meta.url)), "utf8"), name, evaluateExpression);
+const file = example("bench-cooler.yaml");
 const definition = file.define();
 
 function rows(varies: readonly string[], shown: readonly string[], steps = 5): SweepRow[] {
@@ -92,6 +93,14 @@ describe("sweeps", () => {
     expect(found[3].results[0]).toBe(20);
   });
 
+  it("find what costs more only where it is shown", () => {
+    const [[required, oxygen], [power]] = [["liquefaction.required", "station-4.liquid-oxygen"], ["net-power"]].map((shown) => rows(["T1.efficiency=50%,60%"], shown)[0].results);
+    const alone = solve(definition);
+    expect(required).toBeCloseTo(alone.liquefaction.required as number, 9);
+    expect(oxygen).toBeCloseTo(alone.stations[3].liquidOxygen as number, 9);
+    expect(power).toBeCloseTo(alone.power.net, 6);
+  });
+
   it("refuse more points than can be waited for, before the first", () => {
     const { variable } = parseVariation("T1.efficiency", file, [], 2);
     expect(() => sweep(file, [{ variable, values: Array.from({ length: MOST_POINTS + 1 }, () => 0.5) }], [])).toThrow(InputError);
@@ -99,17 +108,30 @@ describe("sweeps", () => {
 });
 
 describe("the register of results", () => {
-  const all = [...resultQuantities, ...blockQuantities(definition)];
+  const all = [...resultQuantities, ...blockQuantities(definition), ...stationQuantities(definition)];
   it("has each name once, in kebab-case behind a block's name, with a text", () => {
     expect(new Set(all.map(({ name }) => name)).size).toBe(all.length);
     for (const { name, help } of all) {
-      expect(name).toMatch(/^(?:[A-Z]\w*|[a-z]+(?:-[a-z]+)*)(?:\.[a-z]+(?:-[a-z]+)*)?$/);
+      expect(name).toMatch(/^(?:[A-Z]\w*|station-\d+|[a-z]+(?:-[a-z]+)*)(?:\.[a-z]+(?:-[a-z]+)*)?$/);
       expect(help).not.toBe("");
     }
   });
 
-  it("answers a number for a machine with a load", () => {
-    const result = solve(definition, { threshold: false });
-    for (const { name, get } of all) expect(get(result), name).toSatisfy((value) => Number.isFinite(value) || name === "HX1.conductance" || name === "HX1.transfer-units");
+  it("answers a number for a machine with a load, but where it has no such number", () => {
+    const result = solve(definition);
+    const none = all.filter(({ get }) => !Number.isFinite(get(result))).map(({ name }) => name);
+    // The warm gas condenses in this recuperator: its stations' liquid alone has a composition.
+    const dry = result.stations.filter(({ liquidOxygen }) => liquidOxygen === null).map(({ station }) => `station-${station}.liquid-oxygen`);
+    expect(none.filter((name) => !["HX1.conductance", "HX1.transfer-units"].includes(name))).toEqual(dry);
+  });
+
+  it("numbers stations as the state points are, an open circuit's intake being 0", () => {
+    const opened = example("workshop-air.yaml").define();
+    expect(opened.circuit).toBe("open");
+    const result = solve(opened, { threshold: false });
+    const names = stationQuantities(opened).filter(({ name }) => name.endsWith(".temperature"));
+    expect(names.map(({ name }) => name)).toEqual(result.stations.map(({ station }) => `station-${station}.temperature`));
+    expect(names.map(({ get }) => get(result))).toEqual(result.stations.map(({ temperature }) => temperature));
+    expect(names[0].name).toBe("station-0.temperature");
   });
 });
