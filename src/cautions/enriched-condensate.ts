@@ -19,20 +19,22 @@ export const enrichedCondensate: CautionRecord = {
     const coldest = stations.reduce((cold, station) => (station.temperature < cold.temperature ? station : cold));
     const wet = working === "air" ? stations.filter(({ phase }) => phase === "two-phase" || phase === "liquid") : [];
     const richest = Math.max(0, ...wet.map(({ liquidOxygen }) => liquidOxygen ?? 0));
-    const outside = coldest.temperature < dewPoint;
-    if (wet.length === 0 && !outside) return null;
+    const outside = stations.filter(({ temperature }) => temperature < dewPoint);
+    if (wet.length === 0 && outside.length === 0) return null;
     const where: string[] = [];
     if (wet.length > 0) {
       const [first] = wet;
       where.push(`air condenses inside, behind ${wet.map(({ after }) => after).join(", ")} (${first.temperature.toFixed(1)} K at ${(first.pressure / 1e5).toFixed(2)} bar)${richest > 0 ? `, to a liquid with up to ${Math.round(richest * 100)} % oxygen` : ""}`);
     }
-    if (outside) {
-      where.push(`${coldest.after} at ${coldest.temperature.toFixed(1)} K is colder than the ${dewPoint.toFixed(1)} K at which the surrounding air condenses on any surface it reaches, unless vacuum keeps it off`);
+    if (outside.length > 0) {
+      where.push(
+        `the surrounding air condenses from ${dewPoint.toFixed(1)} K down on any surface it reaches, where neither vacuum nor a purge keeps it off: behind ${outside.map(({ after }) => after).join(", ")} (down to ${coldest.temperature.toFixed(1)} K)`,
+      );
     }
     return {
       text:
-        `${capital(where.join("; "))}. The first drops hold about ${Math.round(FIRST_LIQUID_OXYGEN * 100)} % oxygen, and more as they evaporate: oil, grease, foam, wood, tar and clothing burn ` +
-        "violently in it. No oil in the gas or in the expander's bearings there, no combustible insulation, parts clean as for oxygen service, insulation tight or evacuated, and drips caught where nothing burns.",
+        `${capital(where.join("; "))}. The first drops out of air at 1 atm hold about ${Math.round(FIRST_LIQUID_OXYGEN * 100)} % oxygen, and more as they evaporate: oil, grease, foam, wood, tar and clothing burn ` +
+        "violently in it. No oil in the gas or in the expander's bearings there, no combustible insulation, parts clean as for oxygen service, insulation tight, purged or evacuated, and drips caught where nothing burns.",
       figures: { coldestTemperature: coldest.temperature, airDewPoint: dewPoint, firstLiquidOxygen: FIRST_LIQUID_OXYGEN, ...(richest > 0 ? { richestLiquidOxygen: richest } : {}) },
     };
   },

@@ -9,13 +9,15 @@ import { enrichedCondensate } from "./enriched-condensate.js";
 import { frost } from "./frost.js";
 import { licensedPractice } from "./licensed-practice.js";
 import { oxygenService } from "./oxygen-service.js";
+import { storedPressure } from "./stored-pressure.js";
 import { trappedFluid } from "./trapped-fluid.js";
 
-/** Every hazard, in the order in which they are printed. */
+/** Every hazard, the gravest first, as they are printed; what always holds comes last. */
 export const cautionRecords: readonly CautionRecord[] = [
   oxygenService,
   enrichedCondensate,
   trappedFluid,
+  storedPressure,
   discharge,
   asphyxiation,
   cold,

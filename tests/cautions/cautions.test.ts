@@ -74,6 +74,14 @@ describe("oxygen-enriched condensate", () => {
     expect(found(cold, "oxygen-enriched-condensate")?.figures.airDewPoint).toBeCloseTo(81.72, 1);
   });
 
+  it("names every station where the surrounding air condenses, and no other", () => {
+    const [station] = liquefying.stations;
+    const at = (after: string, temperature: number) => ({ ...station, after, temperature, phase: "gas" as const, vapourFraction: 1 });
+    const text = found({ ...liquefying, fluid: "helium", stations: [at("C1", 300), at("T1", 60), at("L1", 81), at("HX1 cold", 82)] }, "oxygen-enriched-condensate")?.text;
+    for (const cold of ["T1", "L1"]) expect(text).toContain(cold);
+    expect(text).not.toMatch(/C1|HX1/);
+  });
+
   it("is not named above both dew points", () => {
     expect(found(mild(), "oxygen-enriched-condensate")).toBeUndefined();
   });
@@ -93,18 +101,63 @@ describe("a closed-off section that warms up", () => {
     expect(figures.warmedPressure).toBeGreaterThan(figures.highestPressure);
   });
 
+  /** A machine's contents as liquid air at 1 atm, as a separator holds it. */
+  const holdingLiquid: SteadyState = {
+    ...liquefying,
+    surroundings: { ...liquefying.surroundings, temperature: 293.15 },
+    stations: [{ ...liquefying.stations[0], temperature: 78.9, density: fluid("air").saturation(101325).liquidDensity, phase: "liquid", vapourFraction: 0 }],
+  };
+
   it("says where the equation ends for liquid", () => {
-    const [station] = liquefying.stations;
-    const liquid = { ...liquefying, stations: [{ ...station, temperature: 79, density: 874, phase: "liquid" as const, vapourFraction: 0 }] };
-    const { figures } = found(liquid, "trapped-fluid") as Caution;
+    const { figures } = found(holdingLiquid, "trapped-fluid") as Caution;
     expect(figures.warmedPressure).toBe(fluid("air").maximumPressure);
-    // Liquid air expands about 730 times: 874 kg/m3 against 1.2 kg/m3.
-    expect(figures.expansionRatio).toBeGreaterThan(700);
-    expect(figures.expansionRatio).toBeLessThan(750);
+    // 728: volume of gas from one of liquid air at about 20 degC, as published for liquid-air breathing sets; good to 0.5 %.
+    expect(Math.abs(figures.expansionRatio / 728 - 1)).toBeLessThan(0.005);
+    expect(figures.liquidExpansionRatio).toBeUndefined();
+  });
+
+  it("tells what the liquid of a wet station does where it collects", () => {
+    const { figures } = found(liquefying, "trapped-fluid") as Caution;
+    expect(figures.liquidExpansionRatio).toBeGreaterThan(10 * figures.expansionRatio);
+    expect(figures.liquidWarmedPressure).toBe(fluid("air").maximumPressure);
+    const { figures: dry } = found(mild(), "trapped-fluid") as Caution;
+    expect(dry.liquidExpansionRatio).toBeUndefined();
   });
 
   it("is not named for a machine that is nowhere cold", () => {
     expect(found({ ...liquefying, stations: liquefying.stations.filter(({ temperature }) => temperature > 290) }, "trapped-fluid")).toBeUndefined();
+  });
+});
+
+describe("stored pressure", () => {
+  const held = (fluidName: string, pressure: number, warm = liquefying.surroundings): SteadyState => ({
+    ...liquefying,
+    fluid: fluidName,
+    surroundings: warm,
+    stations: [{ ...liquefying.stations[0], pressure }],
+  });
+
+  it("is what an ideal gas gives off on expanding without loss", () => {
+    // p / (k - 1) (1 - (p0 / p)^((k - 1) / k)): helium, k = 5/3, and air, k = 7/5, are close to ideal at 5 bar.
+    for (const [name, k] of [["helium", 5 / 3], ["air", 7 / 5]] as const) {
+      const { figures } = found(held(name, 5e5), "stored-pressure") as Caution;
+      const ideal = (5e5 / (k - 1)) * (1 - (liquefying.surroundings.pressure / 5e5) ** ((k - 1) / k));
+      expect(Math.abs(figures.storedEnergyPerVolume / ideal - 1), name).toBeLessThan(0.02);
+    }
+  });
+
+  it("is named above 0.5 bar over the surroundings, whatever their pressure", () => {
+    for (const pressure of [0.6e5, 1.01325e5]) {
+      const surroundings = { ...liquefying.surroundings, pressure };
+      expect(found(held("air", pressure + 0.49e5, surroundings), "stored-pressure")).toBeUndefined();
+      expect(found(held("air", pressure + 0.51e5, surroundings), "stored-pressure")?.figures.gaugePressure).toBeCloseTo(0.51e5, 4);
+    }
+  });
+
+  it("goes without the energy where the expanded gas leaves the equation", () => {
+    const { figures } = found(held("air", 900e5, { ...liquefying.surroundings, pressure: 1 }), "stored-pressure") as Caution;
+    expect(figures.highestPressure).toBe(900e5);
+    expect(figures.storedEnergyPerVolume).toBeUndefined();
   });
 });
 
@@ -113,6 +166,20 @@ describe("compressor discharge", () => {
     const { figures } = found(liquefying, "compressor-discharge") as Caution;
     expect(figures.dischargeTemperature).toBe(liquefying.blocks.find(({ name }) => name === "C1")?.dischargeTemperature);
     expect(figures.dischargeTemperature).toBeGreaterThan(figures.oilCokes);
+  });
+
+  it("names the hottest stage of every hot compressor", () => {
+    const [compressor] = liquefying.blocks;
+    const blocks = [
+      { ...compressor, name: "C1", dischargeTemperature: 400, stageDischargeTemperatures: [350, 400, 390] },
+      { ...compressor, name: "C2", dischargeTemperature: 450, stageDischargeTemperatures: [450] },
+      { ...compressor, name: "C3", dischargeTemperature: 320, stageDischargeTemperatures: [320] },
+      { name: "T1", kind: "expander", power: 3 },
+    ];
+    const { text, figures } = found({ ...liquefying, blocks }, "compressor-discharge") as Caution;
+    expect(text).toMatch(/C1 stage 2 at 127 degC, C2 at 177 degC\./);
+    expect(text).not.toContain("C3");
+    expect(figures.dischargeTemperature).toBe(450);
   });
 
   it("is not named for a cool one", () => {
