@@ -1,5 +1,5 @@
 import type { Composition } from "../fluids/mixture.js";
-import { ANSWERED, NO_STEADY_STATE, optionText, settingsOf, setOption, type Command, type Input, type Terminal } from "./command.js";
+import { ANSWERED, NO_STEADY_STATE, optionText, optionTexts, settingsOf, setOption, type Command, type Input, type Terminal } from "./command.js";
 
 /** Rows of the table less one. */
 const POINTS = 20;
@@ -46,7 +46,7 @@ export const boiloff: Command = {
     const answer = study.boiloff(source.liquid, pressure.value, points);
     const present = await import("../present/boiloff.js");
     const format = optionText(input, "format") ?? "text";
-    if (format === "json") terminal.write(JSON.stringify({ origin: source.origin, ...answer }, null, 2));
+    if (format === "json") terminal.write((await import("../present/json.js")).jsonText({ origin: source.origin, ...answer }));
     else if (format === "csv") terminal.write(present.boiloffCsv(answer));
     else terminal.write(present.boiloffText(answer, source.origin, terminal.colour));
     return ANSWERED;
@@ -61,6 +61,8 @@ async function sourceOf(input: Input, terminal: Terminal): Promise<Source | null
   const { fluidNames } = await import("../fluids/registry.js");
   const { dryAir } = await import("../fluids/data/air-mixture.js");
   const [name = ""] = input.arguments;
+  const [setting] = optionTexts(input, "set");
+  if (fluidNames.includes(name) && setting !== undefined) throw (await import("./vary.js")).optionFault("set", setting, `a cycle file to set it in, instead of ${name}`);
   if (name === "air") return { liquid: dryAir, origin: "liquid air", ambient: ATMOSPHERE };
   if (fluidNames.includes(name)) await refuse(name, name);
 

@@ -76,6 +76,7 @@ describe("boiloff", () => {
     ["no pressure", ["air", "--pressure", "77 K"]],
     ["a pressure at which air freezes", ["air", "--pressure", "4 kPa"]],
     ["a pressure near vacuum", ["air", "--pressure", "10 Pa"]],
+    ["a setting without a file to set it in", ["air", "--set", "T1.efficiency=60%"]],
     ["no number of points", ["air", "--points", "2.5"]],
   ])("refuses %s", (_case, words) => {
     const { status, out, told } = program.run("boiloff", ...words);
