@@ -79,7 +79,7 @@ export const recuperator: BlockKind = {
     { name: "conductance", label: "conductance UA", dimension: "conductance" },
     { name: "transferUnits", label: "transfer units NTU", dimension: "none" },
     { name: "smallestDifference", label: "smallest difference", dimension: "temperature difference" },
-    { name: "smallestDifferenceAt", label: "at this share of the duty from the warm end", dimension: "fraction" },
+    { name: "smallestDifferenceAt", label: "place of it, from the warm end", dimension: "fraction" },
     { name: "warmEndDifference", label: "difference at the warm end", dimension: "temperature difference" },
     { name: "coldEndDifference", label: "difference at the cold end", dimension: "temperature difference" },
     { name: "heatLeak", label: "heat leak", dimension: "power" },

@@ -2,6 +2,7 @@ import { given, type BlockDefinition } from "../blocks/definition.js";
 import type { Problem } from "../blocks/problem.js";
 import { blockKind } from "../blocks/registry.js";
 import { fluid as fluidNamed } from "../fluids/registry.js";
+import { waterVapourPressure } from "../fluids/water.js";
 import type { CycleDefinition } from "./definition.js";
 import { branchGiven, branchTaken, linesOf } from "./lines.js";
 import { topologyProblems } from "./topology.js";
@@ -20,6 +21,8 @@ export type FloatingRatios = ReadonlyMap<string, number>;
 const SAME_PRESSURE = 1e-6;
 /** Share; pressures that meet in a mixer may differ by this. */
 const MIXING_TOLERANCE = 5e-3;
+/** K up to which water's vapour pressure is known well below its critical point. */
+const HOTTEST_HUMID = 600;
 /** Ratio assumed for a floating block where none is known yet. */
 const ASSUMED_RATIO = 1.2;
 
@@ -148,6 +151,15 @@ function temperatureProblems(definition: CycleDefinition): Problem[] {
   const problems: Problem[] = [];
   if (outside(surroundings.temperature)) {
     problems.push({ code: "temperature-outside-equation", key: "surroundings", found: `${surroundings.temperature} K`, expected });
+  }
+  const { temperature, pressure, relativeHumidity } = surroundings;
+  if (problems.length === 0 && temperature < HOTTEST_HUMID && relativeHumidity * waterVapourPressure(temperature) >= pressure) {
+    problems.push({
+      code: "humidity-over-pressure",
+      key: "surroundings",
+      found: `water at ${Number((relativeHumidity * 100).toPrecision(4))} % humidity and ${temperature} K, whose vapour alone has ${bar(relativeHumidity * waterVapourPressure(temperature))}`,
+      expected: `less than the surroundings' pressure of ${bar(pressure)}`,
+    });
   }
   for (const entry of linesOf(definition).flatMap(({ entries }) => entries)) {
     for (const key of blockKind(entry.kind)?.keys ?? []) {

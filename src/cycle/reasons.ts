@@ -45,7 +45,8 @@ export function tooWarm({ tears, blocks, setting }: Network, change: Float64Arra
   let largestLoad: string | null = null;
   let heaviest = 0;
   for (const { unit, ports } of blocks) {
-    const heat = unit.refrigeration === undefined ? 0 : unit.refrigeration().heat;
+    // From the enthalpies alone: so large a heat may lead to no state that there is.
+    const heat = unit.refrigeration === undefined ? 0 : ports.reduce((sum, { inlet, outlet }) => sum + outlet.massFlow * (outlet.enthalpy - inlet.enthalpy), 0);
     asked += heat;
     if (heat > heaviest) [heaviest, largestLoad] = [heat, ports[0]?.entry.name ?? null];
   }

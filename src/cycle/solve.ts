@@ -1,5 +1,7 @@
 import { assemble } from "./assemble.js";
+import { OutOfRangeError } from "../fluids/errors.js";
 import type { CycleDefinition } from "./definition.js";
+import { NoSteadyState } from "./failure.js";
 import { liquefactionMargin, liquefactionThreshold, type Trial } from "./liquefaction.js";
 import { buildNetwork } from "./network.js";
 import type { Liquefaction, SteadyState } from "./result.js";
@@ -31,6 +33,15 @@ const settledTears = new WeakMap<SteadyState, Float64Array>();
  * @throws NoSteadyState with the block, the quantity and what to change, where there is none
  */
 export function solve(definition: CycleDefinition, options: SolveOptions = {}): SteadyState {
+  try {
+    return solved(definition, options);
+  } catch (error) {
+    if (!(error instanceof OutOfRangeError)) throw error;
+    throw new NoSteadyState(null, error.quantity, `a state leaves the range of the equation: ${error.message}.`, "Look for a value in the file that is far from any real machine's.");
+  }
+}
+
+function solved(definition: CycleDefinition, options: SolveOptions): SteadyState {
   const network = buildNetwork(definition);
   const from = options.neighbour === undefined ? undefined : settledTears.get(options.neighbour);
   const settled = settle(network, { lookColder: options.lookColder !== false, from });

@@ -114,3 +114,17 @@ describe("a neighbour to start from", () => {
     expect(started.solver.iterations).toBeLessThan(alone.solver.iterations);
   });
 });
+
+describe("values far from any machine's", () => {
+  it.each([
+    ["a load of a megawatt", benchCooler(0.5, 0.9, 1e6)],
+    ["a nearly vanishing effectiveness", benchCooler(0.5, 1e-6, 20)],
+    ["a perfect exchanger and a perfect expander", benchCooler(1, 1, 0)],
+  ])("%s is answered with a result or a reason, never a raw error", (_what, definition) => {
+    try {
+      expect(solve(definition).audit.energy).toBeLessThan(1e-8);
+    } catch (error) {
+      expect(error).toBeInstanceOf(NoSteadyState);
+    }
+  });
+});
