@@ -9,6 +9,9 @@ import type { Liquefaction } from "./result.js";
 
 /** Efficiency to which the threshold is known. */
 const TOLERANCE = 1e-7;
+/** J/kg; a margin still as large as this in a bracket as narrow as that is a jump: the machine falls from one steady state to a colder one. */
+const JUMP = 500;
+const JUMP_WIDTH = 1e-4;
 /** Lowest efficiency considered: a wheel that only brakes the gas. */
 const LOWEST = 0.01;
 /** J/kg, a margin that stands for a machine that does not even cool to its surroundings' temperature. */
@@ -89,7 +92,7 @@ export function liquefactionThreshold(
         : `even at 100 % the gas stays ${(highMargin / 1e3).toFixed(1)} kJ/kg above its dew point`,
     );
   }
-  return answer(bracketedRoot(marginAt, low, high, { tolerance: TOLERANCE }, lowMargin, highMargin), null);
+  return answer(bracketedRoot(marginAt, low, high, { tolerance: TOLERANCE, enough: (value, width) => width < JUMP_WIDTH && Math.abs(value) > JUMP }, lowMargin, highMargin), null);
 }
 
 function efficiencies(definition: CycleDefinition, expander: string | undefined): number[] {

@@ -3,6 +3,8 @@ export interface RootOptions {
   /** Width of the bracket at which the root is known, in the argument's unit. */
   readonly tolerance?: number;
   readonly mostIterations?: number;
+  /** Whether a value and the width of its bracket will do: a jump through zero has no root to be closed in on. */
+  readonly enough?: (value: number, width: number) => boolean;
 }
 
 /**
@@ -18,7 +20,7 @@ export function bracketedRoot(
   f: (x: number) => number,
   a: number,
   b: number,
-  { tolerance = 0, mostIterations = 200 }: RootOptions = {},
+  { tolerance = 0, mostIterations = 200, enough }: RootOptions = {},
   fa = f(a),
   fb = f(b),
 ): number {
@@ -46,7 +48,7 @@ export function bracketedRoot(
     }
     const nearest = 2 * Number.EPSILON * Math.abs(b) + tolerance / 2;
     const half = (c - b) / 2;
-    if (Math.abs(half) <= nearest || fb === 0) return b;
+    if (Math.abs(half) <= nearest || fb === 0 || enough?.(fb, Math.abs(c - b)) === true) return b;
     const trial = interpolation(a, b, c, fa, fb, fc);
     if (
       Math.abs(stepBefore) >= nearest &&
