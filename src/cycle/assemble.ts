@@ -138,16 +138,16 @@ function performanceOf({ blocks, setting }: Network, accounts: Audit, capacity: 
 function productOf(network: Network, ofAir: boolean): SteadyState["liquid"] {
   const { products, inlet } = network;
   const massFlow = products.reduce((sum, stream) => sum + stream.massFlow, 0);
-  return massFlow > 0 ? { massFlow, fractionOfFlow: massFlow / inlet.massFlow, oxygenMoleFraction: ofAir ? drawnOxygen(network) : null } : null;
+  return massFlow > 0 ? { where: "product", massFlow, fractionOfFlow: massFlow / inlet.massFlow, oxygenMoleFraction: ofAir ? drawnOxygen(network) : null } : null;
 }
 
 /** The liquid carried by the wettest station. */
 function liquidOf(stations: readonly Station[]): SteadyState["liquid"] {
   let wettest: SteadyState["liquid"] = null;
-  for (const { vapourFraction, massFlow, liquidOxygen } of stations) {
+  for (const { after, vapourFraction, massFlow, liquidOxygen } of stations) {
     const fractionOfFlow = 1 - (vapourFraction ?? 1);
     if (fractionOfFlow > (wettest?.fractionOfFlow ?? 0)) {
-      wettest = { massFlow: massFlow * fractionOfFlow, fractionOfFlow, oxygenMoleFraction: liquidOxygen };
+      wettest = { where: after, massFlow: massFlow * fractionOfFlow, fractionOfFlow, oxygenMoleFraction: liquidOxygen };
     }
   }
   return wettest;

@@ -119,7 +119,7 @@ export interface SteadyState {
    * What is drawn, or else the liquid carried by the wettest station. The oxygen in a draw is that of the liquid separated in an open
    * circuit; in a closed one it is air's, for in the steady state the draw carries away what the make-up brings in.
    */
-  readonly liquid: { readonly massFlow: number; readonly fractionOfFlow: number; readonly oxygenMoleFraction: number | null } | null;
+  readonly liquid: { /** The station's `after`, or "product". */ readonly where: string; readonly massFlow: number; readonly fractionOfFlow: number; readonly oxygenMoleFraction: number | null } | null;
   readonly liquefaction: Liquefaction;
   readonly stations: readonly Station[];
   readonly blocks: readonly BlockResult[];

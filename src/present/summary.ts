@@ -40,7 +40,8 @@ function condition({ reached, margin, where }: CycleResult["liquefaction"], liqu
   if (liquid === null) return `yes: liquid forms behind ${where}`;
   const { massFlow, fractionOfFlow, oxygenMoleFraction } = liquid;
   const oxygen = oxygenMoleFraction === null ? "" : `; the liquid holds ${percent(oxygenMoleFraction, 0)} oxygen`;
-  return `yes: liquid forms behind ${where}, ${significant(massFlow * 1e3, 3)} g/s of it (${percent(fractionOfFlow)} of the flow)${oxygen}`;
+  const amount = `${significant(massFlow * 1e3, 3)} g/s (${percent(fractionOfFlow)} of the flow)`;
+  return `yes: ${liquid.where === "product" ? `${amount} is drawn` : `liquid forms, most of it behind ${liquid.where}: ${amount}`}${oxygen}`;
 }
 
 function threshold({ required, given, reason, parameter }: CycleResult["liquefaction"]): string {

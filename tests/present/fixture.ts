@@ -49,7 +49,7 @@ export const fixture: CycleResult = {
   refrigeration: { capacity: 50, loads: [{ name: "L1", heat: 50, inletTemperature: 79.9996, outletTemperature: 81 }] },
   power: { compression: 11000, drive: 12500, expansion: 408, recovered: 0, net: 12500 },
   performance: { cop: 0.004, carnotCop: 0.38, secondLawEfficiency: 0.0105263 },
-  liquid: { massFlow: 0.0048766, fractionOfFlow: 0.48766, oxygenMoleFraction: 0.412 },
+  liquid: { where: "T1", massFlow: 0.0048766, fractionOfFlow: 0.48766, oxygenMoleFraction: 0.412 },
   liquefaction: { reached: true, margin: -98765, where: "T1", parameter: "T1.efficiency", required: 0.31415, reason: null, given: 0.5 },
   stations,
   blocks: [
