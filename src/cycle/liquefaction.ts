@@ -14,6 +14,8 @@ const JUMP = 500;
 const JUMP_WIDTH = 1e-4;
 /** Lowest efficiency considered: a wheel that only brakes the gas. */
 const LOWEST = 0.01;
+/** Factor by which the efficiency is moved until the machine turns from dry to wet or back. */
+const STRIDE = 1.6;
 /** J/kg, a margin that stands for a machine that does not even cool to its surroundings' temperature. */
 const FAR_FROM_LIQUID = 1e6;
 
@@ -80,19 +82,31 @@ export function liquefactionThreshold(
       return error.quantity === "temperature" ? -FAR_FROM_LIQUID : FAR_FROM_LIQUID;
     }
   };
-  const known = same === null ? null : { efficiency: same, margin: margin.margin };
-  const [low, lowMargin] = known !== null && known.margin > 0 ? [known.efficiency, known.margin] : [LOWEST, marginAt(LOWEST)];
-  if (lowMargin <= 0) return answer(null, `it liquefies at any efficiency, even at ${LOWEST * 100} %`);
-  const [high, highMargin] = known !== null && known.margin <= 0 ? [known.efficiency, known.margin] : [1, marginAt(1)];
-  if (highMargin > 0) {
-    return answer(
-      null,
-      highMargin === FAR_FROM_LIQUID
-        ? "even perfect expanders give no steady state below the surroundings' temperature"
-        : `even at 100 % the gas stays ${(highMargin / 1e3).toFixed(1)} kJ/kg above its dew point`,
-    );
+  // Bracketed from what the file gives, in steps by a factor: near it the margins are of one size, and few trials are needed.
+  let low = same !== null && margin.margin > 0 ? { efficiency: same, margin: margin.margin } : null;
+  let high = same !== null && margin.margin <= 0 ? { efficiency: same, margin: margin.margin } : null;
+  while (low === null) {
+    const efficiency = Math.max(LOWEST, (high?.efficiency ?? 1) / STRIDE);
+    const trial = { efficiency, margin: marginAt(efficiency) };
+    if (trial.margin > 0) low = trial;
+    else if (efficiency === LOWEST) return answer(null, `it liquefies at any efficiency, even at ${LOWEST * 100} %`);
+    else high = trial;
   }
-  return answer(bracketedRoot(marginAt, low, high, { tolerance: TOLERANCE, enough: (value, width) => width < JUMP_WIDTH && Math.abs(value) > JUMP }, lowMargin, highMargin), null);
+  while (high === null) {
+    const efficiency = Math.min(1, low.efficiency * STRIDE);
+    const trial = { efficiency, margin: marginAt(efficiency) };
+    if (trial.margin <= 0) high = trial;
+    else if (efficiency < 1) low = trial;
+    else {
+      return answer(
+        null,
+        trial.margin === FAR_FROM_LIQUID
+          ? "even perfect expanders give no steady state below the surroundings' temperature"
+          : `even at 100 % the gas stays ${(trial.margin / 1e3).toFixed(1)} kJ/kg above its dew point`,
+      );
+    }
+  }
+  return answer(bracketedRoot(marginAt, low.efficiency, high.efficiency, { tolerance: TOLERANCE, enough: (value, width) => width < JUMP_WIDTH && Math.abs(value) > JUMP }, low.margin, high.margin), null);
 }
 
 function efficiencies(definition: CycleDefinition, expander: string | undefined): number[] {
