@@ -9,7 +9,8 @@ const read = (path: string): string => readFileSync(new URL(`../${path}`, import
 describe("the README", () => {
   it("shows what a run of the bench cooler begins with", () => {
     const shown = /begins:\n\n```\n([\s\S]*?)\n```/.exec(read("README.md"))?.[1] ?? "";
-    const printed = report(solve(readCycle(read("cycles/bench-cooler.yaml"))), false);
+    const definition = readCycle(read("cycles/bench-cooler.yaml"));
+    const printed = report(definition, solve(definition), false);
     expect(shown.length).toBeGreaterThan(500);
     expect(printed.startsWith(shown)).toBe(true);
   });

@@ -67,7 +67,8 @@ async function sourceOf(input: Input, terminal: Terminal): Promise<Source | null
   if (fluidNames.includes(name)) await refuse(name, name);
 
   const { solveFile } = await import("./solve-file.js");
-  const { fluid, stations, surroundings, liquefaction } = await solveFile(name, await settingsOf(input), { threshold: false });
+  const { result } = await solveFile(name, await settingsOf(input), { threshold: false });
+  const { fluid, stations, surroundings, liquefaction } = result;
   if (fluid !== "air") await refuse(name, fluid);
   const { wetAir } = await import("../cycle/composition.js");
   const wet = stations.flatMap((station) => {

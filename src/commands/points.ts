@@ -13,7 +13,7 @@ export const points: Command = {
   async run(input, terminal) {
     const { solveFile } = await import("./solve-file.js");
     const { stationTable } = await import("../present/stations.js");
-    const result = await solveFile(input.arguments[0] ?? "", await settingsOf(input), { threshold: false, composition: false });
+    const { result } = await solveFile(input.arguments[0] ?? "", await settingsOf(input), { threshold: false, composition: false });
     terminal.write(stationTable(result.stations, optionText(input, "format") as "text" | "csv" | "md"));
     return ANSWERED;
   },

@@ -23,13 +23,13 @@ export const run: Command = {
 
 async function runOnce(input: Input, terminal: Terminal): Promise<number> {
   const { solveFile } = await import("./solve-file.js");
-  const result = await solveFile(input.arguments[0] ?? "", await settingsOf(input));
+  const { definition, result } = await solveFile(input.arguments[0] ?? "", await settingsOf(input));
   if (input.options.json === true) {
     const { jsonText } = await import("../present/json.js");
     terminal.write(jsonText(result));
     return ANSWERED;
   }
   const { report } = await import("../present/report.js");
-  terminal.write(report(result, terminal.colour));
+  terminal.write(report(definition, result, terminal.colour));
   return ANSWERED;
 }

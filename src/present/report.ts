@@ -1,4 +1,5 @@
 import pc from "picocolors";
+import type { CycleDefinition } from "../cycle/definition.js";
 import type { CycleResult, ProfilePoint } from "../cycle/result.js";
 import { cautionsText } from "./cautions.js";
 import { blockFigures } from "./figures.js";
@@ -6,13 +7,14 @@ import { lossTable } from "./losses.js";
 import { moistureText } from "./moisture.js";
 import { fixed } from "./numbers.js";
 import { profileChart } from "./profile-chart.js";
+import { schematic } from "./schematic.js";
 import { stationTable } from "./stations.js";
 import { summary } from "./summary.js";
 import { wetStations } from "./wet-stations.js";
 import { wrap } from "./wrap.js";
 
-/** All that `run` prints of a result, at most 100 columns wide. */
-export function report(result: CycleResult, colour: boolean): string {
+/** All that `run` prints of a machine and its result, at most 100 columns wide. */
+export function report(definition: CycleDefinition, result: CycleResult, colour: boolean): string {
   const { bold } = pc.createColors(colour);
   const section = (title: string, body: string): string => `${bold(title)}\n\n${body}`;
   const { fluid, circuit, surroundings } = result;
@@ -24,6 +26,7 @@ export function report(result: CycleResult, colour: boolean): string {
     `${bold(wrap(result.title))}\n${setting}`,
     summary(result),
     warningLines(result, colour),
+    section("The machine", schematic(definition, result)),
     section("State points", stationTable(result.stations)),
     wetStations(result.stations),
     section("Blocks", blockFigures(result.blocks)),

@@ -22,10 +22,10 @@ describe("any machine", () => {
     const property = fc.asyncProperty(settings, async (given) => {
       const overrides = Object.entries(given).map(([address, value]) => ({ address, value }));
       const text = await solveFile(bench, overrides).then(
-        (result) => {
+        ({ definition, result }) => {
           solved++;
           expect(JSON.parse(jsonText(result))).toEqual(result);
-          return report(result, false);
+          return report(definition, result, false);
         },
         (error: unknown) => {
           if (error instanceof NoSteadyState) return noSteadyState(error);

@@ -1,4 +1,5 @@
 import type { CycleResult, Station } from "../../src/cycle/result.js";
+import { singleExpander } from "../cycle/definitions.js";
 
 type Row = readonly [after: string, temperature: number, bar: number, enthalpy: number, entropy: number, density: number, exergy: number];
 
@@ -35,6 +36,9 @@ const profile = Array.from({ length: 11 }, (_, i) => ({
   warmTemperature: 305.15 - 18.4694 * i,
   coldTemperature: 298.004 - 21.7004 * i + 0.5 * i * (10 - i),
 }));
+
+/** A machine with the blocks of the made-up result. */
+export const fixtureDefinition = singleExpander({ highPressure: 40e5, lowPressure: 1.2e5, aftercooled: 305.15, recuperator: { effectiveness: 0.95 }, expander: { efficiency: 0.5 } });
 
 /** A result with a warning, a caution, liquid, a pinch inside, and stations above the critical pressure. */
 export const fixture: CycleResult = {

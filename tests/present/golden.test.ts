@@ -2,12 +2,12 @@ import { describe, expect, it } from "vitest";
 import { jsonText } from "../../src/present/json.js";
 import { report } from "../../src/present/report.js";
 import { stationTable } from "../../src/present/stations.js";
-import { fixture } from "./fixture.js";
+import { fixture, fixtureDefinition } from "./fixture.js";
 
 /** Text as it was looked at and found good; `npx vitest run tests/present -u` renews it, to be looked at again. */
 describe("the text of a made-up result", () => {
   it.each([
-    ["report.txt", report(fixture, false)],
+    ["report.txt", report(fixtureDefinition, fixture, false)],
     ["points.txt", stationTable(fixture.stations)],
     ["points.csv", stationTable(fixture.stations, "csv")],
     ["points.md", stationTable(fixture.stations, "md")],

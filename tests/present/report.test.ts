@@ -1,6 +1,7 @@
 import { readdirSync, readFileSync } from "node:fs";
 import { describe, expect, it } from "vitest";
 import { assessed } from "../../src/cautions/registry.js";
+import type { CycleDefinition } from "../../src/cycle/definition.js";
 import type { CycleResult, Station } from "../../src/cycle/result.js";
 import { blockKind } from "../../src/blocks/registry.js";
 import { NoSteadyState } from "../../src/cycle/failure.js";
@@ -16,13 +17,18 @@ import { summary } from "../../src/present/summary.js";
 
 const folder = new URL("../../cycles/", import.meta.url);
 
+function definitionOf(file: string): CycleDefinition {
+  return readCycle(readFileSync(new URL(file, folder), "utf8"), { file });
+}
+
 function example(file: string): CycleResult {
-  const definition = readCycle(readFileSync(new URL(file, folder), "utf8"), { file });
+  const definition = definitionOf(file);
   return assessed(definition, solve(definition));
 }
 
 const solved = readdirSync(folder).map((file) => [file, example(file)] as const);
 const bench = example("bench-cooler.yaml");
+const benchDefinition = definitionOf("bench-cooler.yaml");
 
 function expectNarrow(text: string): void {
   for (const line of text.split("\n")) {
@@ -38,8 +44,8 @@ function withThreshold(given: number | null, required: number | null): string {
 }
 
 describe("the report", () => {
-  it.each(solved)("of %s fits a terminal, and holds every block, station, caution and warning", (_file, result) => {
-    const text = report(result, false);
+  it.each(solved)("of %s fits a terminal, and holds every block, station, caution and warning", (file, result) => {
+    const text = report(definitionOf(file), result, false);
     expectNarrow(text);
     expect(text).not.toMatch(/NaN|undefined|null|Infinity|\[object/);
     for (const { name, kind } of result.blocks) if (blockKind(kind) !== undefined) expect(text).toContain(`\n${name} (`);
@@ -50,17 +56,17 @@ describe("the report", () => {
   });
 
   it("has colour only when asked", () => {
-    expect(report(bench, false).includes("\u001B")).toBe(false);
-    const coloured = report(bench, true);
+    expect(report(benchDefinition, bench, false).includes("\u001B")).toBe(false);
+    const coloured = report(benchDefinition, bench, true);
     expect(coloured).toContain("\u001B[1m");
     // eslint-disable-next-line no-control-regex
-    expect(coloured.replaceAll(/\u001B\[\d+m/g, "").split("\n").map((line) => line.trimEnd()).join("\n")).toBe(report(bench, false));
+    expect(coloured.replaceAll(/\u001B\[\d+m/g, "").split("\n").map((line) => line.trimEnd()).join("\n")).toBe(report(benchDefinition, bench, false));
   });
 
   it("says where there is a colder steady state too", () => {
     const other = { ...bench, solver: { ...bench.solver, otherSteadyStates: true } };
-    expect(report(bench, false)).not.toContain("colder steady state");
-    expect(report(other, false)).toContain("colder steady state");
+    expect(report(benchDefinition, bench, false)).not.toContain("colder steady state");
+    expect(report(benchDefinition, other, false)).toContain("colder steady state");
   });
 });
 
@@ -166,7 +172,7 @@ describe("a block's figures", () => {
 
 describe("what check understood of a file", () => {
   it.each(readdirSync(folder))("%s fits a terminal and names every block", (file) => {
-    const definition = readCycle(readFileSync(new URL(file, folder), "utf8"), { file });
+    const definition = definitionOf(file);
     const text = understood(definition);
     expectNarrow(text);
     for (const { name } of definition.loop) expect(text).toContain(`\n${name} `);
