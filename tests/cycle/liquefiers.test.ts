@@ -101,6 +101,35 @@ describe("the Claude liquefier of nitrogen, 300 K, 1 to 40 atm", () => {
   });
 });
 
+describe("the first law over the cold box, as the handbook writes it for each system", () => {
+  // Source: R. F. Barron, Cryogenic Systems, 2nd ed., chapter on liquefaction systems (from memory), y yield, x expander's share:
+  //   Claude, Kapitza, Heylandt   y (h1 - hf) = (h1 - h2) + x (h3 - he)
+  //   precooled Linde-Hampson     y (h1 - hf) = (h1 - h2) + heat taken by the precooler per kg
+  // with the return stream's own enthalpy for h1, since real exchangers leave a difference at the warm end.
+  it.each([["claude", 0.6], ["kapitza", 0.92], ["heylandt", 0.55]] as const)("%s", (name, share) => {
+    const result = example(name);
+    const returned = enthalpy(result, "HX1 cold");
+    const expanded = share * (enthalpy(result, "S1 branch") - enthalpy(result, "T1"));
+    const expected = (returned - enthalpy(result, "A1") + expanded) / (returned - enthalpy(result, "F1 liquid"));
+    expect((result.liquid?.fractionOfFlow ?? 0) / expected).toBeCloseTo(1, 8);
+  });
+
+  it("precooled-linde-hampson", () => {
+    const result = example("precooled-linde-hampson");
+    const returned = enthalpy(result, "HX1 cold");
+    const taken = Number(result.blocks.find(({ name }) => name === "R1")?.heatTaken) / result.massFlow;
+    const expected = (returned - enthalpy(result, "A1") + taken) / (returned - enthalpy(result, "F1 liquid"));
+    expect((result.liquid?.fractionOfFlow ?? 0) / expected).toBeCloseTo(1, 8);
+  });
+
+  it("two-turbines-booster: the load is the turbines' work less what the warm end loses", () => {
+    const result = example("two-turbines-booster");
+    const work = enthalpy(result, "HX1 warm") - enthalpy(result, "T1") + enthalpy(result, "HX2 warm") - enthalpy(result, "T2");
+    const lost = enthalpy(result, "A2") - enthalpy(result, "HX1 cold");
+    expect((result.massFlow * (work - lost)) / result.refrigeration.capacity).toBeCloseTo(1, 7);
+  });
+});
+
 describe("the real liquefiers of the examples", () => {
   it("precooling raises the throttle's yield, the more the colder (common practice, no source)", () => {
     const yields = ["-20 degC", "-35 degC", "-45 degC"].map((outlet) => example("precooled-linde-hampson", { "R1.outlet-temperature": outlet }).liquid?.fractionOfFlow ?? 0);
