@@ -51,11 +51,13 @@ export function isName(text: string): boolean {
   return NAME.test(text.trim());
 }
 
-/** The unit that a foreign way of writing it means: 22 °C, 3 m³/h. */
+/** The unit that a foreign way of writing it means: 22 °C, 3 m³/h, 250 lpm. */
 export function unitMeant(written: string): string | undefined {
   const plain = written.replaceAll("\u00B0", "deg").replaceAll("\u00B3", "3");
   if (Object.hasOwn(units, plain)) return plain;
-  return /^C(elsius)?$/i.test(written) ? "degC" : /^F(ahrenheit)?$/i.test(written) ? "degF" : undefined;
+  if (/^C(elsius)?$/i.test(written)) return "degC";
+  if (/^F(ahrenheit)?$/i.test(written)) return "degF";
+  return /^lpm$/i.test(written) ? "L/min" : undefined;
 }
 
 const FLOWS: readonly UnitKind[] = ["mass flow", "molar flow", "normal volume flow", "standard volume flow", "volume flow"];
