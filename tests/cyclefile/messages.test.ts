@@ -37,6 +37,12 @@ describe("docs/messages.md", () => {
     expect([...new Set(documented)].toSorted()).toEqual([...codesOfSource()].toSorted());
   });
 
+  it("says of every code what it means and what to do", () => {
+    const rows = readFileSync(join(root, "docs/messages.md"), "utf8").split("\n").filter((line) => line.startsWith("| `"));
+    expect(rows).toHaveLength(documented.length);
+    for (const row of rows) expect(row).toMatch(/^\| `[a-z-]+` \| [^|]{5,} \| [^|]{5,} \|$/);
+  });
+
   it("finds the codes it is to find", () => {
     for (const code of ["no-file", "wrong-shape", "side-twice", "pressure-rises", "wet-inlet", "state", "no-convergence"]) expect(codesOfSource()).toContain(code);
     expect(codesOfSource().size).toBeGreaterThan(60);
